@@ -1,0 +1,72 @@
+"""The application: addresses, and what every answer carries."""
+
+import re
+import secrets
+from collections.abc import Callable
+
+from flask import Flask, Response, g, request
+
+from service import errors
+from service.catalogue import install as install_catalogue
+from service.compute import respond
+from service.config import Config, service_version
+from service.config import read as read_config
+from service.physics.declare import QUANTITIES, Quantity
+
+REQUEST_ID = re.compile(r"[A-Za-z0-9._-]{1,64}\Z", re.ASCII)
+COMPUTED = "no-store"
+
+
+def create_app(config: Config | None = None) -> Flask:
+    """Return the application."""
+    settings = config or read_config()
+    app = Flask("service", static_folder=None)
+    app.url_map.strict_slashes = False
+    app.url_map.merge_slashes = False
+    limit = max(settings.csv_bytes, settings.json_bytes)
+    app.config.update(
+        MAX_CONTENT_LENGTH=limit + 1,  # one more than allowed, so that a body without a length is refused, not cut
+        MAX_FORM_MEMORY_SIZE=limit,
+        MAX_FORM_PARTS=1000,
+    )
+    errors.install(app)
+    app.before_request(_begin)
+    app.after_request(_finish(settings))
+    for quantity in QUANTITIES.values():
+        app.add_url_rule(f"/v1/{quantity.name}", quantity.name, _view(quantity, settings), methods=["GET", "POST"])
+    install_catalogue(app, settings)
+    return app
+
+
+def _view(quantity: Quantity, config: Config) -> Callable[[], Response]:
+    def view() -> Response:
+        return respond(quantity, request, config)
+
+    return view
+
+
+def _begin() -> Response | None:
+    asked = request.headers.get("X-Request-ID", "")
+    g.request_id = asked if REQUEST_ID.match(asked) else secrets.token_hex(8)
+    return Response(status=204) if request.method == "OPTIONS" else None
+
+
+def _finish(config: Config) -> Callable[[Response], Response]:
+    version = service_version()
+
+    def finish(response: Response) -> Response:
+        headers = response.headers
+        headers["Catspaw-Version"] = version
+        headers["X-Request-ID"] = g.get("request_id", "")
+        headers["X-Content-Type-Options"] = "nosniff"
+        if config.cors:
+            headers["Access-Control-Allow-Origin"] = config.cors
+            headers["Access-Control-Expose-Headers"] = "Catspaw-Version, Catspaw-Assumed, Catspaw-Methods, X-Request-ID"
+            if request.method == "OPTIONS":
+                headers["Access-Control-Allow-Methods"] = "GET, HEAD, POST, OPTIONS"
+                headers["Access-Control-Allow-Headers"] = "Content-Type, Authorization, X-Request-ID"
+        if "Cache-Control" not in headers:
+            headers["Cache-Control"] = COMPUTED
+        return response
+
+    return finish

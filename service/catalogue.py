@@ -1,0 +1,164 @@
+"""The addresses that tell what there is: gases, methods, sources, units, limits, and whether the service is well."""
+
+import hashlib
+from collections.abc import Callable, Iterable
+from typing import Any
+
+import orjson
+from flask import Flask, Response, request
+
+from schemas.document import document
+from schemas.requests import SAMPLES_LIMIT
+from schemas.samples import NUMBER
+from service.config import Config, service_version
+from service.physics import catalogue
+from service.physics.declare import GASES, QUANTITIES
+from service.physics.faults import Fault, Refused, unknown
+from service.physics.question import transfer_methods
+from service.physics.terms import WATERS
+from service.physics.units import listing
+
+JSON = "application/json"
+LISTS = ("gases", "parameterisations", "sources", "units")
+
+
+def _told(content: bytes | str, kind: str = JSON) -> Response:
+    """Return an answer that does not change between versions, with its ETag."""
+    body = content.encode() if isinstance(content, str) else content
+    response = Response(body, mimetype=kind)
+    response.set_etag(hashlib.sha256(body).hexdigest()[:32])
+    response.headers["Cache-Control"] = "no-cache"
+    response.make_conditional(request)
+    return response
+
+
+def _json(value: Any) -> Response:
+    return _told(orjson.dumps(value))
+
+
+def _parameters(known: Iterable[str]) -> dict[str, str]:
+    """Return the query's parameters, refusing unknown and repeated ones."""
+    allowed = (*known, "errors", "nocache")
+    found: dict[str, str] = {}
+    for name, values in request.args.lists():
+        if name not in allowed:
+            raise Refused(unknown(name, allowed))
+        if len(values) > 1 and name != "nocache":
+            raise Refused(Fault("repeated_name", name, f"stands {len(values)} times in the query"))
+        found[name] = values[0]
+    return found
+
+
+def _one_of(name: str, value: str | None, choices: Iterable[str]) -> str | None:
+    if value is not None and value not in choices:
+        raise Refused(
+            Fault(
+                "unknown_option",
+                name,
+                f"{value[:100]!r} is not one of {', '.join(choices)}",
+                ", ".join(choices),
+            )
+        )
+    return value
+
+
+def _not_found(name: str, known: Iterable[str], what: str) -> Refused:
+    fault = unknown(name, known, what)
+    return Refused(Fault("not_found", fault.name, fault.reason, ", ".join(known)), status=404)
+
+
+def limits(config: Config) -> dict[str, Any]:
+    """Return the limits of a request."""
+    return {
+        "csv_bytes": config.csv_bytes,
+        "json_bytes": config.json_bytes,
+        "samples": SAMPLES_LIMIT,
+        "query_bytes": 8190,
+        "name_characters": 100,
+        "cell_characters": 1000,
+        "columns_used": 64,
+        "columns_passed": 1024,
+    }
+
+
+def install(app: Flask, config: Config) -> None:
+    """Add the catalogue's addresses to an application."""
+    for rule, view in _views(config).items():
+        app.add_url_rule(rule, f"catalogue {rule}", view, methods=["GET"])
+
+
+def _views(config: Config) -> dict[str, Callable[..., Response]]:
+    def index() -> Response:
+        _parameters(())
+        return _json(
+            {
+                "name": "catspaw",
+                "version": service_version(),
+                "quantities": {
+                    each.name: {"address": f"/v1/{each.name}", "answers": each.title} for each in QUANTITIES.values()
+                },
+                "catalogue": {name: f"/v1/{name}" for name in LISTS},
+                "document": "/openapi.json",
+                "limits": limits(config),
+            }
+        )
+
+    def gases() -> Response:
+        _parameters(())
+        return _json({"gases": [catalogue.gas_record(gas) for gas in GASES.values()]})
+
+    def gas(name: str) -> Response:
+        _parameters(())
+        if name not in GASES:
+            raise _not_found(name, GASES, "a gas")
+        return _json(catalogue.gas_record(GASES[name]))
+
+    def parameterisations() -> Response:
+        asked = _parameters(("water", "wind_speed", "gas"))
+        wind = asked.get("wind_speed")
+        if wind is not None and not NUMBER.fullmatch(wind):
+            raise Refused(Fault("not_a_number", "wind_speed", f"{wind[:60]!r} is not a number", "a number in m s-1"))
+        found = catalogue.parameterisations(
+            _one_of("water", asked.get("water"), WATERS),
+            float(wind) if wind is not None else None,
+            _one_of("gas", asked.get("gas"), GASES),
+        )
+        return _json({"parameterisations": found})
+
+    def parameterisation(name: str) -> Response:
+        _parameters(())
+        if name not in transfer_methods():
+            raise _not_found(name, transfer_methods(), "a parameterisation")
+        return _json(catalogue.parameterisation_record(name))
+
+    def sources() -> Response:
+        form = _one_of("form", _parameters(("form",)).get("form", "json"), ("json", "bibtex"))
+        content = catalogue.bibliography(form or "json")
+        return _told(content, "application/x-bibtex") if isinstance(content, str) else _json({"sources": content})
+
+    def units() -> Response:
+        _parameters(())
+        return _json({"dimensions": listing()})
+
+    def openapi() -> Response:
+        _parameters(())
+        return _json(document(service_version(), limits(config)))
+
+    def healthz() -> Response:
+        return Response(b'{"status":"alive"}', mimetype=JSON)
+
+    def readyz() -> Response:
+        return Response(b'{"status":"ready"}', mimetype=JSON)
+
+    return {
+        "/v1": index,
+        "/v1/gases": gases,
+        "/v1/gases/<name>": gas,
+        "/v1/parameterisations": parameterisations,
+        "/v1/parameterisations/<name>": parameterisation,
+        "/v1/sources": sources,
+        "/v1/units": units,
+        "/openapi.json": openapi,
+        "/healthz": healthz,
+        "/readyz": readyz,
+    }

@@ -1,0 +1,188 @@
+"""The one view behind every quantity: read, check, plan, run, flag, write."""
+
+from collections.abc import Iterator
+from itertools import chain
+from typing import Any
+
+import numpy as np
+from flask import Request as HttpRequest
+from flask import Response
+
+from schemas.requests import SAMPLES_LIMIT, Input, Request, load, quantity_inputs
+from service import writers
+from service.columns import bind
+from service.config import Config
+from service.csv_table import Block, TableError
+from service.csv_text import answer_header, answer_lines, number_cells
+from service.physics.declare import TERMS, Array, Quantity
+from service.physics.faults import Fault, Refused
+from service.physics.question import Answer, answer
+from service.readers import Sent, read, refused_table
+
+FORMS = ("json", "csv", "number")
+STRICT_TOLD = 20  # bad samples named when a request insists on good ones
+CSV_TYPE, JSON_TYPE, NUMBER_TYPE = "text/csv; charset=utf-8", "application/json", "text/plain; charset=utf-8"
+
+
+def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Response:
+    """Answer a request for a quantity."""
+    form = _form_asked(request)
+    sent = read(request, config)
+    raw = bind(sent.table.header, sent.raw, quantity_inputs(quantity)) if sent.table else sent.raw
+    checked = load(quantity, raw)
+    form = form or _form_for(request, sent)
+    if sent.table is None:
+        values = {each.term: each.values for each in checked.inputs if each.values is not None}
+        answered = _strictly(answer(checked.question, values, checked.samples), checked)
+        response = _written(answered, checked, form)
+    elif form == "csv":
+        response = _csv_behind(sent, checked, request)
+    else:
+        response = _written(_whole_table(sent, checked), checked, form)
+    if checked.options.get("detail") != "brief":
+        assumed, methods = writers.header_text(checked.question)
+        response.headers["Catspaw-Assumed"] = assumed
+        response.headers["Catspaw-Methods"] = methods
+    return response
+
+
+def _form_asked(request: HttpRequest) -> str | None:
+    asked = request.args.getlist("form")
+    if not asked:
+        return None
+    if len(asked) > 1 or asked[0] not in FORMS:
+        allowed = ", ".join(FORMS)
+        raise Refused(Fault("unknown_option", "form", f"must be one of {allowed}", allowed))
+    return asked[0]
+
+
+def _form_for(request: HttpRequest, sent: Sent) -> str:
+    """Return the form that Accept asks for, or that of the request itself; Accept never refuses."""
+    own = "csv" if sent.kind == "csv" else "json"
+    accepted = request.accept_mimetypes
+    if not accepted or accepted.quality(f"{'text/csv' if own == 'csv' else JSON_TYPE}") > 0:
+        return own
+    for form, kind in (("json", JSON_TYPE), ("csv", "text/csv"), ("number", "text/plain")):
+        if accepted.quality(kind) > 0:
+            return form
+    return own
+
+
+def _strictly(answered: Answer, checked: Request, line: int | None = None) -> Answer:
+    if checked.options.get("strict") != "1":
+        return answered
+    lost = np.flatnonzero(answered.outcome.verdict.lost)
+    if not lost.size:
+        return answered
+    reasons = answered.outcome.verdict.reasons
+    faults = [
+        Fault("bad_sample", f"sample {row + 1}", "; ".join(reasons.get(row, [])), sample=row + 1, line=line)
+        for row in lost[:STRICT_TOLD].tolist()
+    ]
+    total = Fault("bad_sample", "samples", f"{lost.size} of {answered.samples} have no result, and strict=1 was sent")
+    raise Refused(total, *faults)
+
+
+def _written(answered: Answer, checked: Request, form: str) -> Response:
+    options = checked.options
+    if form == "json":
+        return Response(writers.json_bytes(answered, options.get("detail", "full")), mimetype=JSON_TYPE)
+    if form == "csv":
+        return Response(_csv_alone(answered, checked), content_type=CSV_TYPE)
+    lines = list(writers.number_lines(answered, options.get("decimal", "point")))
+    if len(lines) == 1 and lines[0] == "NaN":
+        reasons = "; ".join(answered.outcome.verdict.reasons.get(0, [])) or "no result"
+        raise Refused(Fault("bad_sample", answered.question.wanted[0].name, f"has no number: {reasons}", sample=1))
+    return Response("\n".join(lines), content_type=NUMBER_TYPE)
+
+
+def _csv_alone(answered: Answer, checked: Request) -> bytes:
+    """Return a table of the inputs as they were understood and the results behind them."""
+    options = checked.options
+    names = [f"{each.term} [{TERMS[each.term].unit}]" for each in checked.inputs]
+    inputs = [np.broadcast_to(each.values, answered.samples) for each in checked.inputs if each.values is not None]
+    numbers, texts = writers.csv_columns(answered)
+    header = ",".join([*names, *writers.csv_names(answered.question, options.get("headers", "units"))])
+    columns = [*inputs, *numbers]
+    missing = options.get("missing", "").encode()
+    first = number_cells(columns[0], missing)
+    block = Block(1, first, np.arange(len(first)), [], {}, {})
+    return header.encode() + b"\n" + answer_lines(block, ",", columns[1:], texts, missing)
+
+
+class _Columns:
+    """The inputs of a table: constants beside it and columns in it, block by block."""
+
+    def __init__(self, sent: Sent, checked: Request) -> None:
+        used = checked.question.used
+        self.constants: dict[str, Array] = {
+            each.term: each.values for each in checked.inputs if each.values is not None
+        }
+        self.columns: list[Input] = [each for each in checked.inputs if each.column is not None and each.term in used]
+        if any(array.size > 1 for array in self.constants.values()):
+            raise Refused(Fault("length", "query", "holds a list beside a table: send one value, or a column"))
+        self.checked = checked
+        if sent.table is None:
+            raise Refused(Fault("table", "csv", "is not there"))
+        indices = [each.column for each in self.columns if each.column is not None]
+        self.blocks = sent.table.blocks(indices, decimal_comma=checked.options.get("decimal") == "comma")
+
+    def answers(self) -> Iterator[tuple[Block, Answer]]:
+        """Yield each block with its answer."""
+        try:
+            for block in self.blocks:
+                values = dict(self.constants)
+                for each, column in zip(self.columns, block.columns, strict=True):
+                    values[each.term] = each.conversion.to_base(column)
+                yield block, answer(self.checked.question, values, len(block.lines), block.bad)
+        except TableError as error:
+            raise refused_table(error) from error
+
+
+def _csv_behind(sent: Sent, checked: Request, request: HttpRequest) -> Response:
+    """Answer a table with a table, block by block; everything that can be refused is refused with the first."""
+    if sent.table is None:
+        raise Refused(Fault("table", "csv", "is not there"))
+    header, options = sent.table.header, checked.options
+    added = writers.csv_names(checked.question, options.get("headers", "units"))
+    plain = {name.partition(" [")[0] for name in added}
+    if clash := [name for name in header.names if name in plain]:
+        raise Refused(
+            *(Fault("collision", name, "is also the name of a column to be written: rename it") for name in clash)
+        )
+    answers = _Columns(sent, checked).answers()
+    first = next(answers, None)
+    missing = options.get("missing", "").encode()
+
+    def lines(block: Block, answered: Answer) -> bytes:
+        numbers, texts = writers.csv_columns(answered)
+        return answer_lines(block, header.delimiter, numbers, texts, missing)
+
+    head = answer_header(header, added)
+    every = chain([first] if first else [], answers)
+    if options.get("strict") == "1":
+        whole = [lines(block, _strictly(each, checked)) for block, each in every]
+        return Response(head + b"".join(whole), content_type=CSV_TYPE)
+    parts = chain([head], (lines(block, each) for block, each in every))
+    if request.environ.get("SERVER_PROTOCOL") == "HTTP/1.0":
+        return Response(b"".join(parts), content_type=CSV_TYPE)
+    return Response(parts, content_type=CSV_TYPE)
+
+
+def _whole_table(sent: Sent, checked: Request) -> Answer:
+    """Return the answer to a whole table at once, for forms that have no lines to stand behind."""
+    gathered = _Columns(sent, checked)
+    blocks = list(gathered.blocks)
+    samples = sum(len(block.lines) for block in blocks)
+    if samples > SAMPLES_LIMIT:
+        limit = f"{SAMPLES_LIMIT} samples"
+        raise Refused(Fault("too_large", "csv", f"of {samples} rows is over the limit of this form", limit), status=413)
+    values: dict[str, Any] = dict(gathered.constants)
+    for place, each in enumerate(gathered.columns):
+        values[each.term] = each.conversion.to_base(np.concatenate([block.columns[place] for block in blocks]))
+    bad: dict[int, str] = {}
+    start = 0
+    for block in blocks:
+        bad |= {start + row: reason for row, reason in block.bad.items()}
+        start += len(block.lines)
+    return _strictly(answer(checked.question, values, samples, bad), checked)

@@ -1,0 +1,149 @@
+"""Good samples beside bad ones: IOC quality flags and the reasons for them."""
+
+from collections.abc import Iterable, Mapping
+from dataclasses import dataclass, field
+
+import numpy as np
+from numpy.typing import NDArray
+
+from service.physics.declare import TERMS, Array, Limits, Term
+from service.physics.engine import Plan, Range
+
+GOOD, SUSPECT, BAD, MISSING = 1, 3, 4, 9  # UNESCO, IOC Manuals and Guides 54, vol. 3
+NO_NUMBER = "no method gives a number here"
+
+
+@dataclass(slots=True)
+class Verdict:
+    """A flag for each sample, and the reasons of those that have any."""
+
+    flags: NDArray[np.int8]
+    reasons: dict[int, list[str]] = field(default_factory=dict)
+
+    def mark(self, rows: Iterable[int], flag: int, reason: str | Mapping[int, str]) -> None:
+        """Raise the flag of some samples and add a reason, one for all or one for each; a reason is told once."""
+        for row in map(int, rows):
+            text = reason if isinstance(reason, str) else reason[row]
+            told = self.reasons.setdefault(row, [])
+            if text not in told:
+                told.append(text)
+            self.flags[row] = max(int(self.flags[row]), flag)
+
+    @property
+    def lost(self) -> NDArray[np.bool_]:
+        """Tell which samples have no result."""
+        return self.flags >= BAD
+
+
+def number_text(value: float) -> str:
+    """Return a number as a person writes it, to six figures."""
+    return f"{value:.6g}"
+
+
+def limits_text(limits: Limits, unit: str) -> str:
+    """Return limits with their unit, such as ``0 to 20 m s-1``."""
+    low, high = limits
+    told = "" if unit == "1" else f" {unit}"
+    if not np.isfinite(low):
+        return f"up to {number_text(high)}{told}"
+    if not np.isfinite(high):
+        return f"from {number_text(low)}{told}"
+    return f"{number_text(low)} to {number_text(high)}{told}"
+
+
+def possible_text(term: Term) -> str:
+    """Return the limits of the possible of a term, in words."""
+    above = "above " if term.above_lower_limit else ""
+    return above + limits_text(term.possible, term.unit)
+
+
+def _rows(mask: NDArray[np.bool_], samples: int) -> Iterable[int]:
+    """Return the marked samples; a value that holds for every sample marks them all."""
+    return range(samples) if mask.size == 1 and samples > 1 and mask[0] else np.flatnonzero(mask)
+
+
+def judge(values: dict[str, Array], samples: int) -> Verdict:
+    """Flag what is missing or impossible in the inputs and blank it there.
+
+    Parameters
+    ----------
+    values : dict of str to (1,) or (samples,) array
+        Inputs by name, in the unit of their term; an array with something impossible is replaced by a copy.
+    samples : int
+        How many samples there are.
+
+    Returns
+    -------
+    Verdict
+        9 for NaN, 4 for what is outside the limits of the possible.
+    """
+    verdict = Verdict(np.full(samples, GOOD, dtype=np.int8))
+    for name, array in values.items():
+        term = TERMS[name]
+        low, high = term.possible
+        smallest, largest = array.min(), array.max()
+        if (smallest > low if term.above_lower_limit else smallest >= low) and largest <= high:
+            continue
+        missing = np.isnan(array)
+        verdict.mark(_rows(missing, samples), MISSING, f"{name} is missing")
+        within = (array > low if term.above_lower_limit else array >= low) & (array <= high)
+        impossible = ~within & ~missing
+        if impossible.any():
+            allowed = possible_text(term)
+            told = {
+                row: f"{name} {number_text(array[row if array.size > 1 else 0])} is impossible: {allowed}"
+                for row in _rows(impossible, samples)
+            }
+            verdict.mark(told, BAD, told)
+            values[name] = np.where(impossible, np.nan, array)
+    return verdict
+
+
+def judge_results(verdict: Verdict, plan: Plan, known: Mapping[str, Array]) -> None:
+    """Flag samples outside a method's range, those a method remarks on, and those without a finite result.
+
+    Parameters
+    ----------
+    verdict : Verdict
+        From `judge`; raised in place.
+    plan : Plan
+        What was run.
+    known : mapping of str to array
+        What came of it.
+    """
+    samples = verdict.flags.size
+    for entry in plan.ranges:
+        _judge_range(verdict, entry, known[entry.key], samples)
+    for remark, keys in plan.remarks:
+        applies = np.atleast_1d(remark.applies(*[known[key] for key in keys]))
+        if applies.any():
+            verdict.mark(_rows(applies, samples), remark.flag, remark.reason)
+    finite = np.ones(samples, dtype=bool)
+    for key in plan.keys.values():
+        array = known[key]
+        if not np.isfinite(array.sum()):
+            finite &= np.isfinite(array)
+    if not finite.all():
+        verdict.mark(np.flatnonzero(~finite & ~verdict.lost), BAD, NO_NUMBER)
+
+
+def _judge_range(verdict: Verdict, entry: Range, array: Array, samples: int) -> None:
+    low, high = entry.limits
+    if array.min() >= low and array.max() <= high:
+        return
+    outside = (array < low) | (array > high)
+    if not outside.any():
+        return
+    term, method = TERMS[entry.term], entry.step.method or entry.step.name
+    kind = "recommended range" if entry.recommended else "range"
+    allowed = limits_text(entry.limits, term.unit)
+    unit = "" if term.unit == "1" else f" {term.unit}"
+    told = {}
+    for row in _rows(outside, samples):
+        value = float(array[row if array.size > 1 else 0])
+        beyond = low - value if value < low else value - high
+        told[row] = (
+            f"{entry.term} {number_text(value)}{unit} is outside the {kind} of {method}, {allowed}, "
+            f"by {number_text(beyond)}{unit}"
+        )
+    verdict.mark(told, GOOD if entry.recommended else SUSPECT, told)

@@ -1,0 +1,100 @@
+"""The quantities: what each address answers. Names only; the steps are found from them."""
+
+import service.physics.air_side
+import service.physics.equilibration
+import service.physics.flux
+import service.physics.gases
+import service.physics.seawater
+import service.physics.sides
+import service.physics.solubility.atmospheric
+import service.physics.solubility.conversions
+import service.physics.solubility.fugacity
+import service.physics.solubility.marine
+import service.physics.terms
+import service.physics.transfer_velocity.lakes
+import service.physics.transfer_velocity.ocean
+import service.physics.transfer_velocity.scaling
+import service.physics.wind  # noqa: F401  the imports file the steps
+from service.physics.declare import Quantity, quantity
+
+TRANSFER_FAMILY = "transfer_velocity"
+TRANSFER = ("transfer_velocity", "transfer_velocity_600", "transfer_velocity_660")
+
+SOLUBILITY = quantity(
+    Quantity(
+        "solubility",
+        "Solubility in every form the trade uses, and the equilibrium concentration",
+        results=(
+            "solubility",
+            "bunsen_coefficient",
+            "ostwald_coefficient",
+            "henry_constant",
+            "equilibrium_concentration",
+            "water_vapour_pressure",
+        ),
+        more=("fugacity_coefficient", "density"),
+        needs_side={"equilibrium_concentration": "air_side", "fugacity_coefficient": "air_side"},
+    )
+)
+
+SCHMIDT_NUMBER = quantity(
+    Quantity("schmidt-number", "Schmidt number of the gas in this water", results=("schmidt_number",))
+)
+
+TRANSFER_VELOCITY = quantity(
+    Quantity(
+        "transfer-velocity",
+        "Gas transfer (piston) velocity",
+        results=(*TRANSFER, "schmidt_number", "wind_speed_10m"),
+        more=("friction_velocity_air", "total_transfer_velocity"),
+    )
+)
+
+FLUX = quantity(
+    Quantity(
+        "flux",
+        "Flux of the gas through the water surface, with every intermediate",
+        results=(
+            "flux",
+            "evasion",
+            "invasion",
+            "transfer_velocity",
+            "schmidt_number",
+            "wind_speed_10m",
+            "solubility",
+            "fugacity_in_water",
+            "fugacity_in_air",
+            "fugacity_difference",
+        ),
+        more=(
+            "concentration_in_water",
+            "equilibrium_concentration",
+            "saturation",
+            "total_transfer_velocity",
+            "transfer_velocity_600",
+            "transfer_velocity_660",
+            "open_water_fraction",
+            "surface_pressure",
+            "water_vapour_pressure",
+            "friction_velocity_air",
+            "density",
+        ),
+        sides=("water_side", "air_side"),
+        units={"solubility": "mol L-1 atm-1"},
+    )
+)
+
+EQUILIBRATION = quantity(
+    Quantity(
+        "equilibration",
+        "Time in which a mixed layer comes into equilibrium with the air",
+        results=(
+            "equilibration_time",
+            "half_time",
+            "time_to_fraction",
+            "storage_ratio",
+            "transfer_velocity",
+        ),
+        more=("total_transfer_velocity", "schmidt_number", "wind_speed_10m"),
+    )
+)

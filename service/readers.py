@@ -1,0 +1,229 @@
+"""From a request's bytes to names and values as sent, whatever the content type says."""
+
+import json
+import re
+from collections.abc import Iterable, Mapping
+from dataclasses import dataclass
+from typing import Any
+
+import orjson
+from flask import Request
+from werkzeug.datastructures import MultiDict
+
+from schemas.samples import Text
+from service.config import Config
+from service.csv_table import Table, TableError, open_table
+from service.physics.faults import Fault, Refused
+
+TABLE_CODES = {
+    "empty_body": "empty",
+    "no_data_row": "empty",
+    "encoding": "unreadable",
+    "line_ends": "unreadable",
+    "header": "table",
+    "unclosed_quote": "table",
+    "too_many_columns": "too_large",
+    "name_too_long": "too_large",
+    "not_a_number": "not_a_number",
+}
+URL_ONLY = ("form", "errors", "nocache")
+FORM_START = re.compile(rb"\A[A-Za-z_][A-Za-z0-9_.]*=")
+EXAMPLE = '{"gas": "co2", "water_temperature": [18.4, 18.6], "salinity": [35.1, 35.0]}'
+
+
+@dataclass(frozen=True, slots=True)
+class Sent:
+    """What a request holds: names with their values as sent, and a table where there is one."""
+
+    kind: str
+    raw: dict[str, Any]
+    table: Table | None = None
+
+
+def read(request: Request, config: Config) -> Sent:
+    """Return what a request holds.
+
+    Raises
+    ------
+    Refused
+        With 400, 413 or 415 where the body cannot be read, 422 where a name is repeated.
+    """
+    query = _single(request.args, "query")
+    for name in URL_ONLY:
+        query.pop(name, None)
+    if request.method in ("GET", "HEAD"):
+        return Sent("query", query)
+    body = _body(request, config)
+    if not body.strip():
+        if query:
+            return Sent("query", query)
+        raise Refused(Fault("empty", "body", "is empty, and so is the query; was Content-Length sent?"), status=400)
+    sent = _recognise(request, body, config)
+    both = sorted(set(query) & set(sent.raw))
+    if both:
+        raise Refused(
+            *(Fault("repeated_name", name, "stands in the query and in the body: send it once") for name in both)
+        )
+    return Sent(sent.kind, {**sent.raw, **query}, sent.table)
+
+
+def _single(pairs: MultiDict[str, str], place: str) -> dict[str, Any]:
+    """Return parameters, refusing one that stands twice."""
+    found: dict[str, Any] = {}
+    for name, values in pairs.lists():
+        if len(values) > 1:
+            raise Refused(Fault("repeated_name", name[:100], f"stands {len(values)} times in the {place}"))
+        found[name] = Text(values[0])
+    return found
+
+
+def _body(request: Request, config: Config) -> bytes:
+    encoding = request.headers.get("Content-Encoding", "identity").strip().lower()
+    if encoding not in ("", "identity"):
+        raise Refused(
+            Fault(
+                "media_type",
+                "Content-Encoding",
+                f"{encoding[:40]!r} is not read: send the body as it is",
+                "identity",
+            ),
+            status=415,
+        )
+    limit = max(config.csv_bytes, config.json_bytes)
+    announced = request.content_length
+    if announced is not None and announced > limit:
+        raise _too_large(announced, limit)
+    body = request.get_data(cache=True, parse_form_data=False)
+    if len(body) > limit:
+        raise _too_large(len(body), limit)
+    if announced is not None and len(body) < announced:
+        reason = f"was cut short: {announced} bytes announced, {len(body)} came"
+        raise Refused(Fault("cut_short", "body", reason), status=400)
+    return body
+
+
+def _too_large(size: int, limit: int) -> Refused:
+    return Refused(Fault("too_large", "body", f"of {size} bytes is over the limit", f"{limit} bytes"), status=413)
+
+
+def _recognise(request: Request, body: bytes, config: Config) -> Sent:
+    if request.mimetype == "multipart/form-data":
+        return _from_form(_form_fields(request), config)
+    start = body.lstrip(b"\xef\xbb\xbf \t\r\n")[:1]
+    if start in (b"{", b"["):
+        return Sent("json", _from_json(body, config))
+    declared = request.mimetype == "application/x-www-form-urlencoded"
+    if FORM_START.match(body) and (declared or b"\n" not in body):
+        if not declared:
+            request.environ["CONTENT_TYPE"] = "application/x-www-form-urlencoded"
+        return _from_form(_form_fields(request), config)
+    if request.mimetype == "application/json" or request.mimetype.endswith("+json"):
+        return Sent("json", _from_json(body, config))
+    return Sent("csv", {}, _from_csv(body, config))
+
+
+def _form_fields(request: Request) -> dict[str, Any]:
+    found = _single(request.form, "form")
+    for name, files in request.files.lists():
+        key = name if name in ("csv", "json") else "csv"
+        if len(files) > 1 or key in found:
+            raise Refused(Fault("repeated_name", name[:100], "stands twice in the form"))
+        found[key] = files[0].read()
+    return found
+
+
+def _from_form(found: dict[str, Any], config: Config) -> Sent:
+    table, document = found.pop("csv", None), found.pop("json", None)
+    if table is not None and document is not None:
+        raise Refused(Fault("two_ways", "csv and json", "both hold a body: send one"))
+    for name in URL_ONLY:
+        if name in found:
+            raise Refused(Fault("unknown_name", name, "is read from the address only: put it behind the ? there"))
+    if table is not None:
+        return Sent("csv", found, _from_csv(_bytes(table), config))
+    if document is not None:
+        values = _from_json(_bytes(document), config)
+        if both := sorted(set(values) & set(found)):
+            raise Refused(*(Fault("repeated_name", name, "stands in the form and in its json") for name in both))
+        return Sent("json", {**values, **found})
+    size = sum(len(value) for value in found.values())
+    if size > config.json_bytes:
+        raise _too_large(size, config.json_bytes)
+    return Sent("form", found)
+
+
+def _bytes(part: str | bytes) -> bytes:
+    return part if isinstance(part, bytes) else part.encode()
+
+
+def _from_csv(body: bytes, config: Config) -> Table:
+    if len(body) > config.csv_bytes:
+        raise _too_large(len(body), config.csv_bytes)
+    try:
+        return open_table(body)
+    except TableError as error:
+        raise refused_table(error) from error
+
+
+def refused_table(error: TableError) -> Refused:
+    """Return a table's fault as a refusal."""
+    fault = Fault(TABLE_CODES[error.code], error.column or "csv", error.detail, line=error.line)
+    return Refused(fault, status=error.status)
+
+
+def _from_json(body: bytes, config: Config) -> dict[str, Any]:
+    if len(body) > config.json_bytes:
+        raise _too_large(len(body), config.json_bytes)
+    try:
+        document = orjson.loads(body.removeprefix(b"\xef\xbb\xbf"))
+    except orjson.JSONDecodeError as error:
+        document = _lenient(body, error)
+    if isinstance(document, list):
+        raise Refused(Fault("unreadable", "body", "is an array: send an object of columns", EXAMPLE))
+    if not isinstance(document, dict):
+        raise Refused(Fault("unreadable", "body", "is not an object", EXAMPLE))
+    if body.count(b'"') != 2 * _strings(document) or b"\\" in body:
+        _refuse_repeated(body)
+    return document
+
+
+def _lenient(body: bytes, error: orjson.JSONDecodeError) -> Any:
+    """Read JSON again with bare NaN as a missing mark, as several clients write it."""
+    if b"NaN" in body:
+        try:
+            return json.loads(body, parse_constant=_constant, parse_int=float)
+        except (ValueError, RecursionError):
+            pass
+    reason = f"is not JSON: {str(error)[:120]}"
+    raise Refused(Fault("unreadable", "body", reason), status=400) from error
+
+
+def _constant(word: str) -> None:
+    if word != "NaN":
+        raise ValueError(word)
+
+
+def _strings(document: Mapping[str, Any]) -> int:
+    """Return how many strings a flat document holds, those inside lists left out."""
+    count = len(document)
+    for value in document.values():
+        if isinstance(value, str):
+            count += 1
+        elif isinstance(value, dict):
+            count += _strings(value)
+    return count
+
+
+def _refuse_repeated(body: bytes) -> None:
+    def pairs(found: Iterable[tuple[str, Any]]) -> dict[str, Any]:
+        seen: dict[str, Any] = {}
+        for name, value in found:
+            if name in seen:
+                raise Refused(Fault("repeated_name", name[:100], "stands twice in one object"))
+            seen[name] = value
+        return seen
+
+    try:
+        json.loads(body, object_pairs_hook=pairs, parse_int=float, parse_constant=_constant)
+    except (RecursionError, ValueError) as error:
+        raise Refused(Fault("unreadable", "body", "is not JSON that can be read"), status=400) from error

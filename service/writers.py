@@ -1,0 +1,139 @@
+"""An answer as JSON, as CSV behind the lines that were sent, or as bare numbers."""
+
+import re
+from collections.abc import Iterator, Mapping
+from typing import Any
+
+import numpy as np
+import orjson
+
+from service.config import service_version
+from service.physics.declare import Array
+from service.physics.judge import Verdict
+from service.physics.question import Answer, Outcome, Question, Wanted
+
+SERVICE = {"name": "catspaw", "version": service_version()}
+THREE_DECIMALS = re.compile(r"\.(\d{3})(?=$|[eE])")
+OPTIONS = orjson.OPT_SERIALIZE_NUMPY
+
+
+def unit_text(wanted: Wanted) -> str:
+    """Return the unit of a result, with what a mass is the mass of."""
+    mass_of = wanted.conversion.mass_of
+    return f"{wanted.conversion.unit} as {mass_of}" if mass_of else wanted.conversion.unit
+
+
+def _result(wanted: Wanted, values: Array, spread: Array | None) -> dict[str, Any]:
+    told: dict[str, Any] = {"values": np.ascontiguousarray(values), "unit": wanted.conversion.unit}
+    if wanted.conversion.mass_of:
+        told["mass_of"] = wanted.conversion.mass_of
+    told["standard_name"] = wanted.standard_name
+    if spread is not None:
+        told["spread"] = np.ascontiguousarray(spread)
+    return told
+
+
+def _quality(verdict: Verdict) -> dict[str, Any]:
+    none: list[str] = []
+    reasons = [none] * verdict.flags.size
+    for row, told in verdict.reasons.items():
+        reasons[row] = told
+    return {"flags": verdict.flags, "reasons": reasons}
+
+
+def _outcome(question: Question, outcome: Outcome, spread: Mapping[str, Array]) -> dict[str, Any]:
+    return {
+        "results": {
+            each.name: _result(each, outcome.results[each.name], spread.get(each.name)) for each in question.wanted
+        },
+        "quality": _quality(outcome.verdict),
+    }
+
+
+def json_bytes(answer: Answer, detail: str = "full") -> bytes:
+    """Return an answer as JSON: arrays always, null where there is no number."""
+    question = answer.question
+    document: dict[str, Any] = {
+        "quantity": question.quantity.name,
+        "gas": question.gas.name,
+        "samples": answer.samples,
+    }
+    document |= _outcome(question, answer.outcome, answer.spread)
+    if answer.by_parameterisation:
+        document["by_parameterisation"] = {
+            name: _outcome(question, outcome, {}) for name, outcome in answer.by_parameterisation.items()
+        }
+    if detail != "brief":
+        document["methods"] = question.methods
+        document["assumed"] = question.assumed
+    document["service"] = SERVICE
+    return orjson.dumps(document, option=OPTIONS)
+
+
+def csv_names(question: Question, headers: str = "units") -> list[str]:
+    """Return the headers of the columns that are written, in order, the flag and the reason last."""
+    names = []
+    several = [name for name in question.plans if name] if len(question.plans) > 1 else []
+    for each in question.wanted:
+        unit = unit_text(each)
+        bracket = f" [{unit}]" if headers == "units" else ""
+        names.append(each.name + bracket)
+        if several:
+            names.append(f"{each.name}_spread{bracket}")
+            names += [f"{each.name}.{name}{bracket}" for name in several]
+    return [*names, "quality_flag", "quality_reason"]
+
+
+def csv_columns(answer: Answer) -> tuple[list[Array], list[Any]]:
+    """Return the number columns of an answer, and its flag and reason columns."""
+    numbers: list[Array] = []
+    for each in answer.question.wanted:
+        numbers.append(answer.outcome.results[each.name])
+        if answer.by_parameterisation:
+            numbers.append(answer.spread[each.name])
+            numbers += [outcome.results[each.name] for outcome in answer.by_parameterisation.values()]
+    verdict = answer.outcome.verdict
+    reasons = [""] * answer.samples
+    for row, told in verdict.reasons.items():
+        reasons[row] = "; ".join(told)
+    return numbers, [verdict.flags, reasons]
+
+
+def number_text(value: float, decimal: str = "point") -> str:
+    """Return a number for a cell: shortest digits that read back exactly, never exactly three after the point.
+
+    An office with decimal commas would read 1.234 as 1234; ``whole`` writes the digits without a point.
+    """
+    if not np.isfinite(value):
+        return "NaN"
+    text = repr(float(value))
+    if decimal == "whole":
+        return _whole(text)
+    return THREE_DECIMALS.sub(r".\g<1>0", text)
+
+
+def _whole(text: str) -> str:
+    mantissa, _, exponent = text.partition("e")
+    whole, _, part = mantissa.partition(".")
+    part = part.rstrip("0")
+    digits = whole + part
+    sign = "-" if digits.startswith("-") else ""
+    digits = digits.lstrip("-").lstrip("0") or "0"
+    return f"{sign}{digits}E{int(exponent or 0) - len(part)}"
+
+
+def number_lines(answer: Answer, decimal: str) -> Iterator[str]:
+    """Yield the first wanted result of each sample as text."""
+    values = answer.outcome.results[answer.question.wanted[0].name]
+    for value in values.tolist():
+        yield number_text(value, decimal)
+
+
+def header_text(question: Question) -> tuple[str, str]:
+    """Return what was assumed and which methods were used, each as one header line."""
+    assumed = "; ".join(
+        f"{name}={told['value']}" + (f" {told['unit']}" if told.get("unit", "1") != "1" else "")
+        for name, told in question.assumed.items()
+    )
+    methods = "; ".join(f"{name}={','.join(e['name'] for e in told)}" for name, told in question.methods.items())
+    return assumed, methods
