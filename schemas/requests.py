@@ -9,6 +9,7 @@ from marshmallow import RAISE, Schema, ValidationError, fields
 
 from schemas.samples import Measured, Reading
 from service.physics.declare import (
+    DERIVED,
     FAMILIES,
     GASES,
     QUANTITIES,
@@ -19,10 +20,10 @@ from service.physics.declare import (
     Gas,
     Quantity,
 )
-from service.physics.engine import methods_for
+from service.physics.engine import plan
 from service.physics.faults import Fault, Refused, unknown
-from service.physics.quantities import TRANSFER_FAMILY
-from service.physics.question import Question, ask, known_names, methods_for_water
+from service.physics.methods import GIVEN, TRANSFER_FAMILY, methods_for, methods_for_water
+from service.physics.question import Question, ask, known_names
 from service.physics.terms import WATERS
 from service.physics.units import Conversion, UnitError, conversion
 
@@ -98,8 +99,6 @@ def quantity_terms(quantity: Quantity) -> frozenset[str]:
     """Return every term from which a quantity can be reached, by any method."""
     reached: set[str] = set()
     ahead = [*quantity.results, *quantity.more]
-    from service.physics.declare import DERIVED
-
     while ahead:
         name = ahead.pop()
         if name in reached or name not in TERMS:
@@ -132,7 +131,7 @@ def family_choices(family: Family, gas: Gas | None = None) -> list[str]:
     """Return the methods that an option takes, for one gas or for any."""
     gases = [gas] if gas else GASES.values()
     names = dict.fromkeys(name for each in gases for name in methods_for(each, family))
-    return [name for name in names if name != "given"]
+    return [name for name in names if name != GIVEN]
 
 
 @lru_cache(maxsize=32)
@@ -279,8 +278,6 @@ def _request(quantity: Quantity, loaded: dict[str, Any], units: Mapping[str, Any
 
 
 def _can(quantity: Quantity, gas: Gas, given: frozenset[str], chosen: Mapping[str, str], name: str) -> bool:
-    from service.physics.engine import plan
-
     if name in quantity.results and name not in quantity.needs_side:
         return True
     return not plan((name,), given, tuple(sorted(chosen.items())), gas.name).missing

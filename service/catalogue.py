@@ -14,7 +14,7 @@ from service.config import Config, service_version
 from service.physics import catalogue
 from service.physics.declare import GASES, QUANTITIES
 from service.physics.faults import Fault, Refused, unknown
-from service.physics.question import transfer_methods
+from service.physics.methods import transfer_methods
 from service.physics.terms import WATERS
 from service.physics.units import listing
 

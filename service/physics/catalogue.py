@@ -19,9 +19,7 @@ from service.physics.declare import (
     Step,
     Uncertainty,
 )
-from service.physics.engine import default_method, methods_for
-from service.physics.quantities import TRANSFER_FAMILY
-from service.physics.question import parameterisation, transfer_methods
+from service.physics.methods import GIVEN, TRANSFER_FAMILY, default_method, methods_for, transfer_methods
 from service.physics.sources import SOURCES
 
 
@@ -132,7 +130,7 @@ def _leading(gas: Gas, results: tuple[str, ...], method: str) -> tuple[Step, Blo
 def own_inputs(name: str) -> tuple[str, ...]:
     """Return the inputs that a parameterisation needs beyond those of every one."""
     reached: set[str] = set()
-    step = parameterisation(name)
+    step = transfer_methods()[name]
     ahead = [parameter for parameter in step.parameters if parameter != COEFFICIENTS]
     while ahead:
         term = ahead.pop()
@@ -166,7 +164,7 @@ def _anyway() -> set[str]:
 
 def parameterisation_record(name: str) -> dict[str, Any]:
     """Return a transfer velocity method with all that tells where it may be used."""
-    step = parameterisation(name)
+    step = transfer_methods()[name]
     return {
         "name": name,
         "water": list(step.water),
@@ -196,9 +194,9 @@ def parameterisations(
     names = methods_for(GASES[gas], family) if gas else list(transfer_methods())
     found = []
     for name in sorted(names):
-        if name == "given":
+        if name == GIVEN:
             continue
-        step = parameterisation(name)
+        step = transfer_methods()[name]
         low, high = step.valid.get("wind_speed_10m", (float("-inf"), float("inf")))
         if water is not None and water not in step.water:
             continue

@@ -1,222 +1,88 @@
 """The engine: finds the steps that lead from what is given to what is wanted, and runs them."""
 
 from collections.abc import Callable, Iterable, Mapping
-from dataclasses import dataclass
 from functools import lru_cache
 from typing import Any
 
 import numpy as np
 
-from service.physics.declare import (
-    COEFFICIENTS,
-    DERIVED,
-    FAMILIES,
-    FAMILY_OF,
-    GASES,
-    SIDES,
-    STEPS,
-    TERMS,
-    Array,
-    DeclarationError,
-    Family,
-    Gas,
-    Limits,
-    Remark,
-    Step,
-)
+from service.physics.declare import COEFFICIENTS, DERIVED, GASES, TERMS, Array, DeclarationError, Remark, Step
+from service.physics.methods import Chooser, terms_of
+from service.physics.plans import Node, Plan, Range
 
-
-@dataclass(frozen=True, slots=True)
-class Node:
-    """A step placed in a plan: the function with its gas bound, and the keys of what goes in and out."""
-
-    step: Step
-    function: Callable[..., Any]
-    arguments: tuple[str, ...]
-    results: tuple[str, ...]
-
-
-@dataclass(frozen=True, slots=True)
-class Range:
-    """Limits that a method states for one term, under the key at which the plan holds it."""
-
-    step: Step
-    term: str
-    key: str
-    limits: Limits
-    recommended: bool
-
-
-@dataclass(frozen=True, slots=True)
-class Plan:
-    """The steps to run in order, the inputs they need, and what the caller must be told of them."""
-
-    nodes: tuple[Node, ...]
-    keys: Mapping[str, str]
-    leaves: tuple[str, ...]
-    defaults: Mapping[str, float]
-    constants: Mapping[str, Array]
-    missing: tuple[str, ...]
-    records: tuple[Step, ...]
-    methods: Mapping[str, str]
-    ranges: tuple[Range, ...]
-    remarks: tuple[tuple[Remark, tuple[str, ...]], ...]
-
-
-def methods_for(gas: Gas, family: Family) -> list[str]:
-    """Return the names of a family's methods that can answer for a gas, in order of declaration."""
-    names: dict[str, None] = {}
-    for result in family.results:
-        for method, ways in STEPS.get(result, {}).items():
-            if method is not None and any(_available(way, result, gas) for way in ways):
-                names[method] = None
-    return list(names)
-
-
-def default_method(gas: Gas, family: Family) -> str | None:
-    """Return the method that a family uses for a gas when none is asked for."""
-    if name := gas.defaults.get(family.name, family.default):
-        return name
-    return next(iter(methods_for(gas, family)), None)
-
-
-def _available(step: Step, result: str, gas: Gas) -> bool:
-    return not step.needs_coefficients or gas.block(result, step.method) is not None
+Swap = Mapping[str, str]  # terms that stand in for others in a part of the plan
 
 
 class _Planner:
     """One walk from the wanted terms back to the inputs."""
 
-    def __init__(self, gas: Gas, given: frozenset[str], chosen: Mapping[str, str]) -> None:
-        self.gas, self.given = gas, given
-        self.methods = {
-            name: method
-            for name, family in FAMILIES.items()
-            if (method := chosen.get(name) or default_method(gas, family))
-        }
-        blocks = [block for block in gas.blocks if self._method_of(block.result) == block.method]
-        self.defaults = {name: value for block in blocks for name, value in block.supplies.items()}
-        self.nodes: list[Node] = []
-        self.placed: set[tuple[str, ...]] = set()
-        self.open: set[str] = set()
-        self.cones: dict[str, frozenset[str]] = {}
+    def __init__(self, choose: Chooser) -> None:
+        self.choose = choose
+        self.nodes: dict[tuple[str, ...], Node] = {}
         self.keys: dict[str, str] = {}
         self.leaves: dict[str, float | None] = {}
         self.constants: dict[str, Array] = {}
         self.missing: dict[str, None] = {}
         self.records: dict[Step, None] = {}
-        self.ranges: list[Range] = []
-        self.remarks: list[tuple[Remark, tuple[str, ...]]] = []
+        self.ranges: dict[Range, None] = {}
+        self.remarks: dict[tuple[Remark, tuple[str, ...]], None] = {}
 
-    def _method_of(self, term: str) -> str | None:
-        family = FAMILY_OF.get(term)
-        return self.methods.get(family.name) if family else None
-
-    def select(self, term: str) -> Step | None:
-        """Return the one step that gives a term here: by its method, else by what is given, else by definition."""
-        for method in dict.fromkeys((self._method_of(term), None)):
-            ways = [s for s in STEPS.get(term, {}).get(method, ()) if _available(s, term, self.gas)]
-            for known in (self.given, self.defaults, (None,)):
-                for step in ways:
-                    if step.way in known:
-                        return step
-        return None
-
-    def supplied(self, term: str) -> float | None:
-        """Return the constant that the gas, or the method chosen for the term's family, brings for a term."""
-        if (constant := self.gas.constants.get(term, TERMS[term].constant)) is not None:
-            return constant
-        if family := FAMILY_OF.get(term):
-            lead = self.select(family.results[0]) if term != family.results[0] else None
-            return lead.supplies.get(term) if lead else None
-        return None
-
-    def cone(self, term: str) -> frozenset[str]:
-        """Return all terms that a term depends on here, itself included."""
-        if term not in self.cones:
-            if term in self.open:
-                raise DeclarationError(f"{term} is needed to compute itself")
-            self.open.add(term)
-            self.cones[term] = frozenset({term}).union(*(self.cone(name) for name in self._inputs(term)))
-            self.open.discard(term)
-        return self.cones[term]
-
-    def _inputs(self, term: str) -> tuple[str, ...]:
-        if term in self.given or term in self.gas.constants:
-            return ()
-        if term in DERIVED:
-            return (DERIVED[term].of, *DERIVED[term].replace.values())
-        step = self.select(term)
-        return tuple(name for name in step.parameters if name != COEFFICIENTS) if step else ()
-
-    def _same(self, term: str) -> str:
-        while term not in self.given and (step := self.select(term)) and step.same_as:
-            term = step.same_as
-        return term
-
-    def visit(self, term: str, swap: Mapping[str, str]) -> str:
+    def visit(self, term: str, swap: Swap) -> str:
         """Place all that a term needs and return the key under which its value will stand."""
         if term in swap:
             return self.visit(swap[term], {})
-        cone = self.cone(term) if swap else frozenset()
-        swap = {old: new for old, new in swap.items() if old in cone and self._same(new) != old}
+        cone = self.choose.cone(term) if swap else frozenset()
+        swap = {old: new for old, new in swap.items() if old in cone and self.choose.same(new) != old}
         suffix = "@" + ",".join(f"{old}={new}" for old, new in swap.items()) if swap else ""
         if term + suffix not in self.keys:
             self.keys[term + suffix] = self._find(term, swap, suffix)
         return self.keys[term + suffix]
 
-    def _find(self, term: str, swap: Mapping[str, str], suffix: str) -> str:
-        if term in self.given:
-            return self._leaf(term)
-        if term in DERIVED:
+    def _find(self, term: str, swap: Swap, suffix: str) -> str:
+        if term in DERIVED and term not in self.choose.given:
             return self.visit(DERIVED[term].of, {**DERIVED[term].replace, **swap})
-        step = None if term in self.gas.constants else self.select(term)
-        if step:
+        if step := self.choose.select(term):
             return self._place(term, step, swap, suffix)
-        if (constant := self.supplied(term)) is not None:
-            self.constants[term] = np.array([constant])
-            return term
-        return self._leaf(term)
+        constant = None if term in self.choose.given else self.choose.constant(term)
+        if constant is None:
+            return self._leaf(term)
+        self.constants[term] = np.array([constant])
+        return term
 
     def _leaf(self, term: str) -> str:
-        default = self.defaults.get(term, TERMS[term].default)
-        if term not in self.given and default is None:
+        default = self.choose.defaults.get(term, TERMS[term].default)
+        if term not in self.choose.given and default is None:
             self.missing[term] = None
         self.leaves[term] = default
         return term
 
-    def _place(self, term: str, step: Step, swap: Mapping[str, str], suffix: str) -> str:
+    def _place(self, term: str, step: Step, swap: Swap, suffix: str) -> str:
         for assumed in step.assumes:
             self._leaf(assumed)
         around = {} if step.in_situ else swap
-        arguments = tuple(self.visit(name, around) for name in step.parameters if name != COEFFICIENTS)
+        arguments = tuple(self.visit(name, around) for name in terms_of(step))
         self.records[step] = None
         self._note(step, term, swap)
         if step.same_as:
             return arguments[0]
         results = tuple(name + suffix for name in step.results)
-        if results not in self.placed:
-            self.placed.add(results)
-            self.nodes.append(Node(step, self._bind(step, term), arguments, results))
+        if results not in self.nodes:
+            self.nodes[results] = Node(step, self._bind(step, term), arguments, results)
         return term + suffix
 
-    def _note(self, step: Step, term: str, swap: Mapping[str, str]) -> None:
-        block = self.gas.block(term, step.method)
+    def _note(self, step: Step, term: str, swap: Swap) -> None:
+        block = self.choose.gas.block(term, step.method)
         stated = {**step.valid, **(block.valid if block else {})}
         for ranges, recommended in ((stated, False), (step.recommended, True)):
             for name, limits in ranges.items():
-                entry = Range(step, name, self.visit(name, swap), limits, recommended)
-                if entry not in self.ranges:
-                    self.ranges.append(entry)
+                self.ranges[Range(step, name, self.visit(name, swap), limits, recommended)] = None
         for remark in step.remarks:
-            remark_keys = (remark, tuple(self.visit(name, swap) for name in remark.terms))
-            if remark_keys not in self.remarks:
-                self.remarks.append(remark_keys)
+            self.remarks[remark, tuple(self.visit(name, swap) for name in remark.terms)] = None
 
     def _bind(self, step: Step, term: str) -> Callable[..., Any]:
         if not step.needs_coefficients:
             return step.function
-        block = self.gas.block(term, step.method)
+        block = self.choose.gas.block(term, step.method)
         if block is None or step.parameters[0] != COEFFICIENTS:
             raise DeclarationError(f"{step.name} must take the coefficients first")
         function, coefficients = step.function, block.coefficients
@@ -225,58 +91,46 @@ class _Planner:
     def plan(self, wanted: Iterable[str]) -> Plan:
         """Return the plan for the wanted terms."""
         keys = {term: self.visit(term, {}) for term in wanted}
-        defaults = {name: value for name, value in self.leaves.items() if name not in self.given and value is not None}
+        given = self.choose.given
         return Plan(
-            tuple(self.nodes),
+            tuple(self.nodes.values()),
             keys,
             tuple(self.leaves),
-            defaults,
+            {name: value for name, value in self.leaves.items() if name not in given and value is not None},
             self.constants,
             tuple(self.missing),
             tuple(self.records),
-            self.methods,
+            self.choose.methods,
             tuple(self.ranges),
             tuple(self.remarks),
         )
 
 
 @lru_cache(maxsize=2048)
-def plan(wanted: tuple[str, ...], given: frozenset[str], chosen: tuple[tuple[str, str], ...], gas_name: str) -> Plan:
+def plan(wanted: tuple[str, ...], given: frozenset[str], chosen: tuple[tuple[str, str], ...], gas: str) -> Plan:
     """Return the steps from what is given to what is wanted; the only place where methods are dispatched.
 
     Parameters
     ----------
-    wanted : tuple of str
-        Terms to compute.
-    given : frozenset of str
-        Inputs that the caller sends.
+    wanted, given : str
+        Terms to compute, and inputs that the caller sends.
     chosen : tuple of (family, method)
         Methods asked for; other families use their default for the gas.
-    gas_name : str
-        The gas.
-
-    Returns
-    -------
-    Plan
-        With `missing` naming what is neither given nor has a default.
+    gas : str
+        The name of the gas.
     """
-    return _Planner(GASES[gas_name], given, dict(chosen)).plan(wanted)
+    return _Planner(Chooser(GASES[gas], given, dict(chosen))).plan(wanted)
 
 
 def run(steps: Plan, values: Mapping[str, Array]) -> dict[str, Array]:
-    """Run a plan.
+    """Run a plan on (1,) or (N,) arrays and return every number by its key. NaN in, NaN out.
 
     Parameters
     ----------
     steps : Plan
         What to run.
-    values : mapping of str to (1,) or (N,) array
+    values : mapping of str to array
         The inputs, in the unit of their term.
-
-    Returns
-    -------
-    dict of str to array
-        Every input, intermediate number and result by its key. NaN in, NaN out.
     """
     known = {name: np.array([value]) for name, value in steps.defaults.items()}
     known |= steps.constants
@@ -289,9 +143,3 @@ def run(steps: Plan, values: Mapping[str, Array]) -> dict[str, Array]:
             else:
                 known.update(zip(node.results, outcome, strict=True))
     return known
-
-
-def side_of(term: str) -> str | None:
-    """Return the side that can give a term, for telling a caller what is missing."""
-    ways = {step.way for steps in STEPS.get(term, {}).values() for step in steps}
-    return next((name for name, record in SIDES.items() if ways & set(record.members)), None)

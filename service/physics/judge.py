@@ -7,7 +7,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from service.physics.declare import TERMS, Array, Limits, Term
-from service.physics.engine import Plan, Range
+from service.physics.plans import Plan, Range
 
 GOOD, SUSPECT, BAD, MISSING = 1, 3, 4, 9  # UNESCO, IOC Manuals and Guides 54, vol. 3
 NO_NUMBER = "no method gives a number here"

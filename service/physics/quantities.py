@@ -17,7 +17,6 @@ import service.physics.transfer_velocity.scaling
 import service.physics.wind  # noqa: F401  the imports file the steps
 from service.physics.declare import Quantity, quantity
 
-TRANSFER_FAMILY = "transfer_velocity"
 TRANSFER = ("transfer_velocity", "transfer_velocity_600", "transfer_velocity_660")
 
 SOLUBILITY = quantity(

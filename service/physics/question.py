@@ -1,18 +1,18 @@
 """A question as it was asked, checked against what the methods need, and its answer."""
 
 from collections.abc import Iterable, Iterator, Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from functools import lru_cache
 from typing import Any
 
 import numpy as np
-from numpy.typing import NDArray
 
 from service.physics.declare import FAMILIES, FAMILY_OF, SIDES, TERMS, Array, Gas, Quantity, Remark, Step
-from service.physics.engine import Plan, default_method, methods_for, plan, run, side_of
-from service.physics.faults import Fault, Refused, unknown
+from service.physics.engine import plan, run
+from service.physics.faults import Fault, Refused
 from service.physics.judge import BAD, SUSPECT, Verdict, judge, judge_results
-from service.physics.quantities import TRANSFER_FAMILY
+from service.physics.methods import GIVEN, TRANSFER_FAMILY, default_method, methods_for_water, side_of, transfer_methods
+from service.physics.plans import Plan
 from service.physics.terms import INLAND
 from service.physics.units import Conversion, UnitError, conversion
 
@@ -116,7 +116,7 @@ def ask(
     if own and (way := next((m for m in SIDES[own].members if m in given), None)):
         if parameterisations:
             raise Refused(Fault("two_ways", way, "takes the place of a parameterisation: send one or the other"))
-        methods[TRANSFER_FAMILY] = "given"
+        methods[TRANSFER_FAMILY] = GIVEN
     plans: dict[str | None, Plan] = {}
     for name in parameterisations or (None,):
         by_name = methods | ({TRANSFER_FAMILY: name} if name else {})
@@ -143,31 +143,6 @@ def ask(
         _assumed(plans.values(), gas, asked),
         _methods(plans.values()),
     )
-
-
-def methods_for_water(gas: Gas, water: str | None) -> list[str]:
-    """Return the transfer velocity methods made for a kind of water."""
-    family = FAMILIES[TRANSFER_FAMILY]
-    records = ((name, parameterisation(name)) for name in methods_for(gas, family) if name != "given")
-    return [name for name, record in records if water is None or water in record.water]
-
-
-def parameterisation(name: str) -> Step:
-    """Return the record of a transfer velocity method."""
-    return transfer_methods()[name]
-
-
-@lru_cache(maxsize=1)
-def transfer_methods() -> dict[str, Step]:
-    """Return the leading record of every transfer velocity method by its name."""
-    from service.physics.declare import STEPS
-
-    found: dict[str, Step] = {}
-    for result in FAMILIES[TRANSFER_FAMILY].results:
-        for method, ways in STEPS.get(result, {}).items():
-            if method and method != "given":
-                found.setdefault(method, ways[0])
-    return found
 
 
 def _uses_transfer(steps: Plan) -> bool:
@@ -269,12 +244,10 @@ def _check_unused(
 
 def _with_remarks(steps: Plan, name: str | None, water: str | None, asked: Mapping[str, str]) -> Plan:
     """Return the plan with what must be said of the kind of water."""
-    from dataclasses import replace
-
     method = name or steps.methods.get(TRANSFER_FAMILY)
-    if not _uses_transfer(steps) or not method or method == "given":
+    if not _uses_transfer(steps) or not method or method == GIVEN:
         return steps
-    record, remarks = parameterisation(method), list(steps.remarks)
+    record, remarks = transfer_methods()[method], list(steps.remarks)
     if water and record.water and water not in record.water:
         told = f"{method} was made for {', '.join(record.water)}, not for water {water}"
         remarks.append((Remark(told, (), lambda: np.array([True])), ()))
@@ -302,7 +275,7 @@ def _methods(plans: Iterable[Plan]) -> dict[str, list[dict[str, Any]]]:
     told: dict[str, list[dict[str, Any]]] = {}
     for each in plans:
         for record in each.records:
-            if record.source is None and record.method != "given":
+            if record.source is None and record.method != GIVEN:
                 continue
             source = record.source
             entry = {
@@ -404,14 +377,3 @@ def _reasons_over(outcomes: Mapping[str, Outcome]) -> Iterator[tuple[int, list[s
 def known_names(quantity: Quantity) -> tuple[str, ...]:
     """Return the results of a quantity, the main ones first."""
     return (*quantity.results, *quantity.more)
-
-
-def check_pick(quantity: Quantity, names: Iterable[str]) -> None:
-    """Refuse results that a quantity does not have."""
-    faults = [unknown(name, known_names(quantity), "a result of this quantity") for name in names]
-    faults = [f for f, name in zip(faults, names, strict=False) if name not in known_names(quantity)]
-    if faults:
-        raise Refused(*faults)
-
-
-Flags = NDArray[np.int8]
