@@ -1,21 +1,28 @@
 """The quantities: what each address answers. Names only; the steps are found from them."""
 
+from importlib import import_module
+from pkgutil import iter_modules
+from types import ModuleType
+
 import service.physics.air_side
 import service.physics.equilibration
 import service.physics.flux
-import service.physics.gases
 import service.physics.seawater
 import service.physics.sides
-import service.physics.solubility.atmospheric
-import service.physics.solubility.conversions
-import service.physics.solubility.fugacity
-import service.physics.solubility.marine
 import service.physics.terms
-import service.physics.transfer_velocity.lakes
-import service.physics.transfer_velocity.ocean
-import service.physics.transfer_velocity.scaling
-import service.physics.wind  # noqa: F401  the imports file the steps
+import service.physics.wind  # noqa: F401  imported for what they declare
+from service.physics import gases, schmidt_number, solubility, transfer_velocity
 from service.physics.declare import Quantity, quantity
+
+
+def _load_all(package: ModuleType) -> None:
+    """Import every module of a package, so that a new file there is known without being named here."""
+    for module in iter_modules(package.__path__, f"{package.__name__}."):
+        import_module(module.name)
+
+
+for _package in (solubility, schmidt_number, transfer_velocity, gases):
+    _load_all(_package)
 
 TRANSFER = ("transfer_velocity", "transfer_velocity_600", "transfer_velocity_660")
 

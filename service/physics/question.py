@@ -7,6 +7,7 @@ from typing import Any
 
 import numpy as np
 
+from service.physics import quantities  # noqa: F401  imported for what it declares
 from service.physics.declare import FAMILIES, FAMILY_OF, SIDES, TERMS, Array, Gas, Quantity, Remark, Step
 from service.physics.engine import plan, run
 from service.physics.faults import Fault, Refused
