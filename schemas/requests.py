@@ -1,13 +1,13 @@
 """What may be asked of a quantity: one schema each, built from the declarations."""
 
-from collections.abc import Iterable, Mapping
+from collections.abc import Container, Iterable, Mapping, Sequence
 from dataclasses import dataclass
 from functools import lru_cache
 from typing import Any
 
 from marshmallow import RAISE, Schema, ValidationError, fields
 
-from schemas.samples import Measured, Reading
+from schemas.samples import Column, Measured, Reading
 from service.physics.declare import (
     DERIVED,
     FAMILIES,
@@ -22,7 +22,16 @@ from service.physics.declare import (
 )
 from service.physics.engine import plan
 from service.physics.faults import Fault, Refused, unknown
-from service.physics.methods import GIVEN, TRANSFER_FAMILY, methods_for, methods_for_water
+from service.physics.methods import (
+    GIVEN,
+    TRANSFER_FAMILY,
+    applicable,
+    method_by_input,
+    methods_for,
+    methods_for_water,
+    remarks_of,
+    wanting,
+)
 from service.physics.question import Question, ask, known_names
 from service.physics.terms import WATERS
 from service.physics.units import Conversion, UnitError, conversion
@@ -40,8 +49,11 @@ class Choice(fields.Field[str]):
         self.forgiving = forgiving
 
     def _deserialize(self, value: Any, attr: str | None, data: Any, **kwargs: Any) -> str:
+        if type(value) is int:
+            value = str(value)  # "strict": 1
         if not isinstance(value, str):
-            raise ValidationError([Fault("unknown_option", str(attr), f"must be text; it {ONCE}")])
+            allowed = ", ".join(self.choices)
+            raise ValidationError([Fault("unknown_option", str(attr), f"must be one of {allowed}; it {ONCE}", allowed)])
         word = value.strip()
         if self.forgiving:
             word = "".join(word.lower().replace("-", "").replace("_", "").split())
@@ -53,7 +65,11 @@ class Choice(fields.Field[str]):
 
 
 class Words(fields.Field[tuple[str, ...]]):
-    """Several words: an array in JSON, parted by semicolons elsewhere."""
+    """Several words: an array in JSON, parted by semicolons elsewhere; at least one, unless none does no harm."""
+
+    def __init__(self, may_be_empty: bool = False, **more: Any) -> None:
+        super().__init__(**more)
+        self.may_be_empty = may_be_empty
 
     def _deserialize(self, value: Any, attr: str | None, data: Any, **kwargs: Any) -> tuple[str, ...]:
         words = value.split(";") if isinstance(value, str) else value
@@ -62,6 +78,8 @@ class Words(fields.Field[tuple[str, ...]]):
         kept = [word.strip() for word in words if word.strip()]
         if len(set(kept)) < len(kept):
             raise ValidationError([Fault("repeated_name", str(attr), "names one thing twice")])
+        if not kept and not self.may_be_empty:
+            raise ValidationError([Fault("unknown_option", str(attr), "is empty: name something, or leave it out")])
         return tuple(kept)
 
 
@@ -81,7 +99,7 @@ class Input:
     term: str
     conversion: Conversion
     values: Array | None
-    column: int | None
+    column: Column | None
 
 
 @dataclass(frozen=True, slots=True)
@@ -110,6 +128,7 @@ def quantity_terms(quantity: Quantity) -> frozenset[str]:
             ahead.append(str(TERMS[name].per_litre))
         for step in (step for ways in STEPS.get(name, {}).values() for step in ways):
             ahead += [*step.parameters, *step.assumes, *([step.same_as] if step.same_as else [])]
+            ahead += [name for remark in remarks_of(step) for name in remark.terms]
     return frozenset(reached)
 
 
@@ -152,12 +171,15 @@ def request_fields(quantity: Quantity) -> dict[str, fields.Field[Any]]:
         "unit": Line(metadata={"description": "unit of the first picked result"}),
         "units": fields.Dict(keys=fields.String(), values=fields.String(), load_only=True),
         "mass_as": Choice(("gas", "element"), metadata={"description": "what a mass is the mass of"}),
-        "detail": Choice(("full", "brief"), metadata={"description": "brief leaves out methods and assumptions"}),
+        "detail": Choice(
+            ("full", "brief", "steps"),
+            metadata={"description": "brief leaves out methods and assumptions; steps adds the calculation in order"},
+        ),
         "strict": Choice(("0", "1"), metadata={"description": "1 refuses a request with any bad sample"}),
         "decimal": Choice(("point", "comma", "whole"), metadata={"description": "how numbers are written"}),
         "headers": Choice(("units", "plain"), metadata={"description": "whether CSV headers carry units"}),
         "missing": Choice(("", "NaN"), metadata={"description": "what stands for no number in CSV"}),
-        "ignore": Words(metadata={"description": "CSV columns to leave out of account"}),
+        "ignore": Words(may_be_empty=True, metadata={"description": "CSV columns to leave out of account"}),
     }
     for name in quantity_inputs(quantity):
         found[name] = Measured(TERMS[name], metadata={"description": TERMS[name].meaning})
@@ -172,26 +194,54 @@ def _schema(quantity: Quantity, names: frozenset[str]) -> Schema:
     return Schema.from_dict(chosen, name=quantity.name)(unknown=RAISE)
 
 
-NOT_SERVED = {
-    "times": "the course in time",
-    "summary": "a summary of a series",
-    "area": "a summary of a series",
-    "coverage": "uncertainty",
-    "draws": "uncertainty",
-    "seed": "uncertainty",
+NAME_LIMIT = 100  # characters
+TOLD = 20  # unknown names that are told in full
+
+# Words that belong to this vocabulary but to parts of it that do not answer yet: refused, never ignored.
+_PARTS = {
+    "the course in time": "times",
+    "a summary of a series": "summary area",
+    "uncertainty": "u_methods u_unpublished uncertainty_method draws seed coverage",
+    "a wind that varies within its averaging time": "wind_averaging wind_speed_variance weibull_shape",
+    "a reading without drying": "air_mole_fraction_wet water_mole_fraction_wet air_temperature relative_humidity",
+    "an equilibrator apart from the water": "equilibrator_temperature equilibrator_pressure temperature_correction",
+    "a closed headspace": "headspace_ratio headspace_start_mole_fraction",
+    "saturation as the water side": "water_saturation saturation_pressure",
+    "the carbonate system": "alkalinity dissolved_inorganic_carbon ph carbonate_constants",
+    "the skin of the water": "subskin_temperature skin_temperature skin_correction",
 }
+NOT_SERVED = {name: part for part, names in _PARTS.items() for name in names.split()}
+
+
+def not_served(name: str, known: Container[str]) -> str | None:
+    """Return the part of the vocabulary that a name belongs to, if that part does not answer yet."""
+    if name in known:
+        return None
+    return NOT_SERVED.get(name) or ("uncertainty" if name.startswith(("u_", "correlation.")) else None)
 
 
 def _unknown_name(quantity: Quantity, name: str) -> Fault:
     known = request_fields(quantity)
+    if len(name) > NAME_LIMIT:
+        reason = f"is a name of {len(name)} characters: no name is longer than {NAME_LIMIT}"
+        return Fault("unknown_name", name[:NAME_LIMIT], reason)
     if name in ("form", "errors", "nocache"):
         return Fault("unknown_name", name, "is read from the address only: put it behind the ? there")
-    if name in NOT_SERVED or name.startswith(("u_", "correlation.")):
-        return Fault("unknown_name", name[:100], f"is not served: {NOT_SERVED.get(name, 'uncertainty')}")
     for other in QUANTITIES.values():
-        if name in request_fields(other):
+        if name in request_fields(other) and name not in known:
             return Fault("unknown_name", name, f"is an input of {other.name}, not of {quantity.name}")
-    return unknown(name, (*known, "form", "errors", "nocache"), f"a name that {quantity.name} knows")
+    if part := not_served(name, known):
+        return Fault("unknown_name", name, f"is not served yet ({part}): leave it out")
+    names = [each for each in known if each != "units"]
+    return unknown(name, (*names, "form", "errors", "nocache"), f"a name that {quantity.name} knows")
+
+
+def _refuse_strangers(quantity: Quantity, names: Sequence[str]) -> None:
+    """Refuse unknown names: the first with a hint at what may be meant, the others counted."""
+    told = [_unknown_name(quantity, name) for name in names[:TOLD]]
+    rest = [Fault("unknown_name", name[:NAME_LIMIT], "is not known") for name in names[TOLD:]]
+    if told:
+        raise Refused(*told, *rest)
 
 
 def load(quantity: Quantity, raw: Mapping[str, Any]) -> Request:
@@ -217,8 +267,9 @@ def load(quantity: Quantity, raw: Mapping[str, Any]) -> Request:
     sent = {name: value for name, value in raw.items() if not name.startswith("unit.")}
     known = request_fields(quantity)
     strangers = [name for name in sent if name not in known or name == "units"]
-    if strangers:
-        raise Refused(*(_unknown_name(quantity, name) for name in strangers))
+    _refuse_strangers(quantity, strangers)
+    inputs = quantity_inputs(quantity)
+    sent = {name: [None] if value is None and name in inputs else value for name, value in sent.items()}
     try:
         loaded = _schema(quantity, frozenset(sent)).load(sent)
     except ValidationError as error:
@@ -234,6 +285,8 @@ def _faults(error: ValidationError) -> list[Fault]:
                 found.append(message)
             elif "required" in str(message):
                 found.append(Fault("missing_input", name, "is needed", ", ".join(GASES) if name == "gas" else None))
+            elif "null" in str(message):
+                found.append(Fault("unknown_option", name, "is null: an option has a value, or is left out"))
             else:
                 found.append(Fault("unknown_option", name, str(message)))
     return found
@@ -247,6 +300,7 @@ def _request(quantity: Quantity, loaded: dict[str, Any], units: Mapping[str, Any
     inputs = [_input(name, reading, gas, mass_as) for name, reading in readings.items()]
     samples = _samples(inputs)
     given = frozenset(each.term for each in inputs)
+    _check_position(given)
     pick = options.get("pick", ())
     pick = known_names(quantity) if pick == ("all",) else pick
     _check_pick(quantity, pick, units)
@@ -260,8 +314,12 @@ def _request(quantity: Quantity, loaded: dict[str, Any], units: Mapping[str, Any
         if family.name != TRANSFER_FAMILY and family.option in options:
             chosen[family.name] = _method(family, gas, options[family.option])
     names = _parameterisations(gas, water, options.get("parameterisation", ()))
+    if water and names == ("all",):
+        names = _all_that_apply(gas, water, given, inputs)
     if options.get("pick") == ("all",):
-        pick = tuple(name for name in pick if _can(quantity, gas, given, chosen, name))
+        own = method_by_input(given)
+        ways = [{**chosen, TRANSFER_FAMILY: name} for name in names or ((own[0],) if own else ())] or [chosen]
+        pick = tuple(name for name in pick if all(_can(quantity, gas, given, way, name) for way in ways))
     question = ask(
         quantity,
         gas,
@@ -275,6 +333,25 @@ def _request(quantity: Quantity, loaded: dict[str, Any], units: Mapping[str, Any
         frozenset(each.term for each in inputs if each.column is not None),
     )
     return Request(question, tuple(inputs), samples, options)
+
+
+def _all_that_apply(gas: Gas, water: str, given: frozenset[str], inputs: Iterable[Input]) -> tuple[str, ...]:
+    """Return the methods that `all` stands for, refusing where the inputs suffice for none."""
+    averaging = next((each.values for each in inputs if each.term == "wind_averaging"), None)
+    names = applicable(gas, water, given, None if averaging is None else float(averaging[0]))
+    if names:
+        return names
+    for_water = methods_for_water(gas, water)
+    wanted = dict.fromkeys(term for name in for_water for term in wanting(gas, given, name))
+    told = f"all: no method for water {water} has its inputs; between them they need {', '.join(wanted)}"
+    raise Refused(Fault("missing_input", FAMILIES[TRANSFER_FAMILY].option, told, ", ".join(wanted)))
+
+
+def _check_position(given: frozenset[str]) -> None:
+    found = given & {"latitude", "longitude"}
+    if len(found) == 1:
+        absent = next(iter({"latitude", "longitude"} - found))
+        raise Refused(Fault("missing_input", absent, f"is needed beside {next(iter(found))}: send both or neither"))
 
 
 def _can(quantity: Quantity, gas: Gas, given: frozenset[str], chosen: Mapping[str, str], name: str) -> bool:
@@ -374,4 +451,4 @@ def _parameterisations(gas: Gas, water: str | None, names: tuple[str, ...]) -> t
         faults.append(Fault("unknown_option", family.option, "all stands alone, and needs water"))
     if faults:
         raise Refused(*faults)
-    return tuple(methods_for_water(gas, water)) if names == ("all",) else names
+    return names

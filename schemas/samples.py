@@ -11,8 +11,12 @@ from service.physics.declare import Array, Term
 from service.physics.faults import Fault
 
 NUMBER = re.compile(r"[+-]?(?:[0-9]+(?:\.[0-9]*)?|\.[0-9]+)(?:[eE][+-]?[0-9]+)?", re.ASCII)
+COMMA_NUMBER = re.compile(NUMBER.pattern.replace(r"\.", ","), re.ASCII)
+LOST_PLUS = re.compile(r"[eE] [0-9]", re.ASCII)
+DECIMAL_COMMA = "a comma: write a decimal point, or send decimal=comma; lists are parted by ;"
 MISSING_MARKS = frozenset({"", "na", "nan", "null"})
 PLAIN_TYPES = {int, float}
+NO_NUMBERS = {bool: "true or false", list: "an array inside an array", dict: "an object inside an array"}
 SHOWN = 60  # characters of a bad value that are repeated to its sender
 
 
@@ -37,7 +41,7 @@ class Reading:
 
     values: Array | None
     unit: str | None
-    column: int | None = None
+    column: Column | None = None
 
 
 def _fault(term: Term, code: str, reason: str, sample: int | None = None) -> ValidationError:
@@ -61,7 +65,7 @@ class Measured(fields.Field[Reading]):
 
     def _deserialize(self, value: Any, attr: str | None, data: Any, **kwargs: Any) -> Reading:
         if isinstance(value, Column):
-            return Reading(None, value.unit, value.index)
+            return Reading(None, value.unit, value)
         if isinstance(value, Text):
             return self._from_text(value, comma=bool(data.get("decimal") == "comma"))
         if isinstance(value, str):
@@ -107,35 +111,40 @@ class Measured(fields.Field[Reading]):
         word, _, rest = part.partition(" ")
         if word.lower() in MISSING_MARKS:
             return np.nan, rest.strip()
-        text = part.replace(",", ".", 1) if comma else part
-        match = NUMBER.match(text)
+        match = (COMMA_NUMBER if comma else NUMBER).match(part)
         if match is None:
             raise _fault(self.term, "not_a_number", f"{shown(part)} is not a number", sample)
-        rest = text[match.end() :].strip()
-        if rest.startswith(","):
-            raise _fault(
-                self.term,
-                "decimal_comma",
-                f"{shown(part)} has a comma: write a decimal point, or send decimal=comma; lists are parted by ;",
-                sample,
-            )
-        return float(match.group()), rest
+        rest = part[match.end() :].strip()
+        if rest.startswith("," if not comma else "."):
+            said = "a point: decimal=comma was sent" if comma else DECIMAL_COMMA
+            raise _fault(self.term, "decimal_comma", f"{shown(part)} has {said}", sample)
+        if LOST_PLUS.match(rest):
+            reason = f"{shown(part)} has lost its +: in an address, + means a blank; write %2B or leave it out"
+            raise _fault(self.term, "not_a_number", reason, sample)
+        return float(match.group().replace(",", ".")), rest
 
     def _array(self, numbers: list[Any]) -> Array:
         if not numbers:
             raise _fault(self.term, "length", "holds no values")
         if not set(map(type, numbers)) <= PLAIN_TYPES:
-            numbers = [self._element(element, index) for index, element in enumerate(numbers)]
+            numbers = self._elements(numbers)
         try:
             return np.array(numbers, dtype=float)
         except OverflowError as error:
             raise _fault(self.term, "not_a_number", "holds an integer beyond the range of numbers") from error
 
-    def _element(self, element: Any, index: int) -> float:
-        if element is None or (isinstance(element, str) and element.strip().lower() in MISSING_MARKS):
-            return np.nan
-        if type(element) in PLAIN_TYPES:
-            return float(element)
-        if isinstance(element, dict):
-            raise _fault(self.term, "not_a_number", "an object stands where a number is expected", index + 1)
-        raise _fault(self.term, "not_a_number", f"{shown(element)} is not a number", index + 1)
+    def _elements(self, elements: list[Any]) -> list[float]:
+        """Return an array that is not all numbers as one that is, or refuse all that is neither number nor missing."""
+        numbers: list[float] = []
+        messages: list[Any] = []
+        for index, element in enumerate(elements):
+            if type(element) in PLAIN_TYPES:
+                numbers.append(element)
+            elif element is None or (isinstance(element, str) and element.strip().lower() in MISSING_MARKS):
+                numbers.append(np.nan)
+            else:
+                what = shown(element) if isinstance(element, str) else NO_NUMBERS[type(element)]
+                messages += _fault(self.term, "not_a_number", f"{what} is not a number", index + 1).messages
+        if messages:
+            raise ValidationError(messages)
+        return numbers

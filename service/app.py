@@ -1,5 +1,6 @@
 """The application: addresses, and what every answer carries."""
 
+import hmac
 import re
 import secrets
 from collections.abc import Callable
@@ -11,10 +12,14 @@ from service.catalogue import install as install_catalogue
 from service.compute import respond
 from service.config import Config, service_version
 from service.config import read as read_config
+from service.evidence import install as install_evidence
 from service.physics.declare import QUANTITIES, Quantity
+from service.physics.faults import Fault, Refused
 
 REQUEST_ID = re.compile(r"[A-Za-z0-9._-]{1,64}\Z", re.ASCII)
 COMPUTED = "no-store"
+QUERY_BYTES = 8190
+GUARDED = ("/v1", "/metrics")  # what a token guards
 
 
 def create_app(config: Config | None = None) -> Flask:
@@ -30,11 +35,12 @@ def create_app(config: Config | None = None) -> Flask:
         MAX_FORM_PARTS=1000,
     )
     errors.install(app)
-    app.before_request(_begin)
+    app.before_request(_begin(settings))
     app.after_request(_finish(settings))
     for quantity in QUANTITIES.values():
         app.add_url_rule(f"/v1/{quantity.name}", quantity.name, _view(quantity, settings), methods=["GET", "POST"])
     install_catalogue(app, settings)
+    install_evidence(app)
     return app
 
 
@@ -45,10 +51,33 @@ def _view(quantity: Quantity, config: Config) -> Callable[[], Response]:
     return view
 
 
-def _begin() -> Response | None:
-    asked = request.headers.get("X-Request-ID", "")
-    g.request_id = asked if REQUEST_ID.match(asked) else secrets.token_hex(8)
-    return Response(status=204) if request.method == "OPTIONS" else None
+def _begin(config: Config) -> Callable[[], Response | None]:
+    def begin() -> Response | None:
+        asked = request.headers.get("X-Request-ID", "")
+        g.request_id = asked if REQUEST_ID.match(asked) else secrets.token_hex(8)
+        if request.method == "OPTIONS":
+            return _empty()
+        if len(request.query_string) > QUERY_BYTES:
+            reason = f"is {len(request.query_string)} bytes long, over the limit: send the values in the body of a POST"
+            raise Refused(Fault("too_large", "query", reason, f"{QUERY_BYTES} bytes"), status=414)
+        if config.token and request.path.startswith(GUARDED) and not _knows(config.token):
+            return errors.unauthorised()
+        return None
+
+    return begin
+
+
+def _empty() -> Response:
+    response = Response(status=204)
+    del response.headers["Content-Type"]
+    return response
+
+
+def _knows(token: str) -> bool:
+    """Tell whether a request brings the token: as a bearer, or as the password of any user."""
+    sent = request.authorization
+    brought = (sent.token if sent.type == "bearer" else sent.password) if sent else None
+    return hmac.compare_digest((brought or "").encode(), token.encode())
 
 
 def _finish(config: Config) -> Callable[[Response], Response]:

@@ -2,24 +2,27 @@
 
 import hashlib
 from collections.abc import Callable, Iterable
+from functools import cache
 from typing import Any
 
 import orjson
 from flask import Flask, Response, request
 
 from schemas.document import document
-from schemas.requests import SAMPLES_LIMIT
+from schemas.requests import SAMPLES_LIMIT, quantity_inputs
 from schemas.samples import NUMBER
 from service.config import Config, service_version
+from service.errors import TYPES
 from service.physics import catalogue
 from service.physics.declare import GASES, QUANTITIES
 from service.physics.faults import Fault, Refused, unknown
 from service.physics.methods import transfer_methods
+from service.physics.quantities import TRANSFER_VELOCITY
 from service.physics.terms import WATERS
 from service.physics.units import listing
 
 JSON = "application/json"
-LISTS = ("gases", "parameterisations", "sources", "units")
+LISTS = ("gases", "parameterisations", "sources", "units", "checks")
 
 
 def _told(content: bytes | str, kind: str = JSON) -> Response:
@@ -36,7 +39,7 @@ def _json(value: Any) -> Response:
     return _told(orjson.dumps(value))
 
 
-def _parameters(known: Iterable[str]) -> dict[str, str]:
+def parameters(known: Iterable[str]) -> dict[str, str]:
     """Return the query's parameters, refusing unknown and repeated ones."""
     allowed = (*known, "errors", "nocache")
     found: dict[str, str] = {}
@@ -49,7 +52,8 @@ def _parameters(known: Iterable[str]) -> dict[str, str]:
     return found
 
 
-def _one_of(name: str, value: str | None, choices: Iterable[str]) -> str | None:
+def one_of(name: str, value: str | None, choices: Iterable[str]) -> str | None:
+    """Return a value of a closed list, or None where there is none, refusing others."""
     if value is not None and value not in choices:
         raise Refused(
             Fault(
@@ -60,6 +64,18 @@ def _one_of(name: str, value: str | None, choices: Iterable[str]) -> str | None:
             )
         )
     return value
+
+
+def _inputs_at_hand(value: str | None) -> list[str] | None:
+    """Return the inputs that a caller has, parted by semicolons, refusing what is none."""
+    if value is None:
+        return None
+    names = [name.strip() for name in value.split(";") if name.strip()]
+    known = quantity_inputs(TRANSFER_VELOCITY)
+    if strangers := [name for name in names if name not in known]:
+        faults = (unknown(name, known, "an input of a transfer velocity") for name in strangers)
+        raise Refused(*(Fault("unknown_option", "inputs", f"{f.name} {f.reason}", f.allowed) for f in faults))
+    return names
 
 
 def _not_found(name: str, known: Iterable[str], what: str) -> Refused:
@@ -89,7 +105,7 @@ def install(app: Flask, config: Config) -> None:
 
 def _views(config: Config) -> dict[str, Callable[..., Response]]:
     def index() -> Response:
-        _parameters(())
+        parameters(())
         return _json(
             {
                 "name": "catspaw",
@@ -104,45 +120,50 @@ def _views(config: Config) -> dict[str, Callable[..., Response]]:
         )
 
     def gases() -> Response:
-        _parameters(())
+        parameters(())
         return _json({"gases": [catalogue.gas_record(gas) for gas in GASES.values()]})
 
     def gas(name: str) -> Response:
-        _parameters(())
+        parameters(())
         if name not in GASES:
             raise _not_found(name, GASES, "a gas")
         return _json(catalogue.gas_record(GASES[name]))
 
     def parameterisations() -> Response:
-        asked = _parameters(("water", "wind_speed", "gas"))
+        asked = parameters(("water", "wind_speed", "gas", "inputs"))
         wind = asked.get("wind_speed")
         if wind is not None and not NUMBER.fullmatch(wind):
             raise Refused(Fault("not_a_number", "wind_speed", f"{wind[:60]!r} is not a number", "a number in m s-1"))
         found = catalogue.parameterisations(
-            _one_of("water", asked.get("water"), WATERS),
+            one_of("water", asked.get("water"), WATERS),
             float(wind) if wind is not None else None,
-            _one_of("gas", asked.get("gas"), GASES),
+            one_of("gas", asked.get("gas"), GASES),
+            _inputs_at_hand(asked.get("inputs")),
         )
         return _json({"parameterisations": found})
 
     def parameterisation(name: str) -> Response:
-        _parameters(())
+        parameters(())
         if name not in transfer_methods():
             raise _not_found(name, transfer_methods(), "a parameterisation")
         return _json(catalogue.parameterisation_record(name))
 
     def sources() -> Response:
-        form = _one_of("form", _parameters(("form",)).get("form", "json"), ("json", "bibtex"))
+        form = one_of("form", parameters(("form",)).get("form", "json"), ("json", "bibtex"))
         content = catalogue.bibliography(form or "json")
         return _told(content, "application/x-bibtex") if isinstance(content, str) else _json({"sources": content})
 
     def units() -> Response:
-        _parameters(())
+        parameters(())
         return _json({"dimensions": listing()})
 
+    @cache
+    def openapi_bytes() -> bytes:
+        return orjson.dumps(document(service_version(), limits(config), TYPES))
+
     def openapi() -> Response:
-        _parameters(())
-        return _json(document(service_version(), limits(config)))
+        parameters(())
+        return _told(openapi_bytes())
 
     def healthz() -> Response:
         return Response(b'{"status":"alive"}', mimetype=JSON)

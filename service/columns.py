@@ -1,13 +1,33 @@
 """Which columns of a table stand for which inputs."""
 
-from collections.abc import Iterable, Mapping
+from collections.abc import Container, Iterable, Mapping
 from typing import Any
 
+from schemas.requests import not_served
 from schemas.samples import Column
 from service.csv_table import Header
 from service.physics.faults import Fault, Refused
 
 USED_LIMIT = 64
+# Columns that will change numbers once they are read, by an input of the quantities that will read them.
+NOT_READ_YET = {
+    "wind_speed": ("wind_speed_variance", "weibull_shape"),
+    "air_mole_fraction": ("air_mole_fraction_wet",),
+    "water_mole_fraction": (
+        "water_mole_fraction_wet",
+        "equilibrator_temperature",
+        "equilibrator_pressure",
+        "headspace_ratio",
+        "headspace_start_mole_fraction",
+        "water_saturation",
+        "saturation_pressure",
+        "alkalinity",
+        "dissolved_inorganic_carbon",
+        "ph",
+        "subskin_temperature",
+        "skin_temperature",
+    ),
+}
 SHORTEST_FOR_A_SLIP = 5  # letters; shorter names are too near to other words
 
 
@@ -42,20 +62,14 @@ def bind(header: Header, raw: Mapping[str, Any], inputs: Iterable[str]) -> dict[
     for index, name in enumerate(header.names):
         if name in ignored or header.raw[index] in ignored:
             continue
-        if name in known:
-            if name in bound:
-                if index not in pointed:
-                    faults.append(_twice(name))
-                continue
+        if name not in known:
+            if _would_be_read(name, known):
+                reason = f"is not served yet ({not_served(name, known)}): rename the column, or send ignore={name}"
+                faults.append(Fault("unknown_name", name, reason))
+        elif name not in bound:
             bound[name] = Column(index, header.raw[index], header.units[index])
-        elif name.startswith("u_") and name[2:] in known:
-            faults.append(
-                Fault(
-                    "unknown_name",
-                    name,
-                    f"is not served: uncertainty; rename the column, or send ignore={name}",
-                )
-            )
+        elif index not in pointed:
+            faults.append(_twice(name, isinstance(bound[name], Column) and name not in raw))
     faults += _near_misses(header, bound, pointed, ignored, known)
     faults += [
         Fault("column", word, "is to be ignored but is not a column", ", ".join(header.names)[:500])
@@ -69,12 +83,18 @@ def bind(header: Header, raw: Mapping[str, Any], inputs: Iterable[str]) -> dict[
     return bound
 
 
-def _twice(name: str) -> Fault:
-    return Fault(
-        "two_ways",
-        name,
-        f"is a column and is given beside the table: send one, or leave the column out with ignore={name}",
-    )
+def _would_be_read(name: str, known: Container[str]) -> bool:
+    """Tell whether a column belongs to a part of the vocabulary that changes numbers but does not answer yet."""
+    if name.startswith("u_"):
+        return name[2:] in known
+    return any(beside in known and name in names for beside, names in NOT_READ_YET.items())
+
+
+def _twice(name: str, as_columns: bool) -> Fault:
+    if as_columns:
+        return Fault("two_ways", name, "is the header of two columns: rename one of them")
+    reason = f"is a column and is given beside the table: send one, or leave the column out with ignore={name}"
+    return Fault("two_ways", name, reason)
 
 
 def _referred(header: Header, name: str, reference: str) -> Column:
@@ -86,6 +106,10 @@ def _referred(header: Header, name: str, reference: str) -> Column:
         text, _, rest = text.rpartition("[")
         text, unit = text.strip(), rest[:-1].strip()
         candidates = [i for i, raw in enumerate(header.raw) if raw == text] or _named(header, text)
+        own = [header.units[i] for i in candidates if header.raw[i] != text]
+        if any(own) and own[0] != unit:
+            reason = f"@{reference[:100]} gives the unit {unit}, the header {own[0]}: send @{text}, or mend the header"
+            raise Refused(Fault("two_ways", name, reason))
     if not candidates:
         raise Refused(Fault("column", name, f"@{reference[:100]} is not a column", ", ".join(header.raw)[:500]))
     if len(candidates) > 1:

@@ -1,12 +1,13 @@
 """The one view behind every quantity: read, check, plan, run, flag, write."""
 
-from collections.abc import Iterator
+from collections.abc import Iterable, Iterator
 from itertools import chain
 from typing import Any
 
 import numpy as np
 from flask import Request as HttpRequest
 from flask import Response
+from numpy.typing import NDArray
 
 from schemas.requests import SAMPLES_LIMIT, Input, Request, load, quantity_inputs
 from service import writers
@@ -14,13 +15,13 @@ from service.columns import bind
 from service.config import Config
 from service.csv_table import Block, TableError
 from service.csv_text import answer_header, answer_lines, number_cells
+from service.errors import LISTED, BadSamples
+from service.physics.answer import Answer, answer
 from service.physics.declare import TERMS, Array, Quantity
 from service.physics.faults import Fault, Refused
-from service.physics.question import Answer, answer
 from service.readers import Sent, read, refused_table
 
 FORMS = ("json", "csv", "number")
-STRICT_TOLD = 20  # bad samples named when a request insists on good ones
 CSV_TYPE, JSON_TYPE, NUMBER_TYPE = "text/csv; charset=utf-8", "application/json", "text/plain; charset=utf-8"
 
 
@@ -28,12 +29,13 @@ def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Respons
     """Answer a request for a quantity."""
     form = _form_asked(request)
     sent = read(request, config)
-    raw = bind(sent.table.header, sent.raw, quantity_inputs(quantity)) if sent.table else sent.raw
+    raw = bind(sent.table.header, sent.raw, _column_names(quantity)) if sent.table else _without_columns(sent.raw)
     checked = load(quantity, raw)
     form = form or _form_for(request, sent)
     if sent.table is None:
         values = {each.term: each.values for each in checked.inputs if each.values is not None}
-        answered = _strictly(answer(checked.question, values, checked.samples), checked)
+        with_steps = checked.options.get("detail") == "steps"
+        answered = _strictly(answer(checked.question, values, checked.samples, with_steps=with_steps), checked)
         response = _written(answered, checked, form)
     elif form == "csv":
         response = _csv_behind(sent, checked, request)
@@ -44,6 +46,20 @@ def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Respons
         response.headers["Catspaw-Assumed"] = assumed
         response.headers["Catspaw-Methods"] = methods
     return response
+
+
+def _column_names(quantity: Quantity) -> list[str]:
+    """Return the inputs that a column may hold; what stands once for the request is never read from one."""
+    return [name for name in quantity_inputs(quantity) if TERMS[name].holds != "request"]
+
+
+def _without_columns(raw: dict[str, Any]) -> dict[str, Any]:
+    """Return names and values as they are, refusing references to columns: there are none."""
+    for name, value in raw.items():
+        if isinstance(value, str) and value.startswith("@"):
+            reason = f"{value[:60]!r} names a CSV column, but no CSV was sent: send the table as the body of a POST"
+            raise Refused(Fault("column", name[:100], reason))
+    return raw
 
 
 def _form_asked(request: HttpRequest) -> str | None:
@@ -68,19 +84,26 @@ def _form_for(request: HttpRequest, sent: Sent) -> str:
     return own
 
 
-def _strictly(answered: Answer, checked: Request, line: int | None = None) -> Answer:
-    if checked.options.get("strict") != "1":
-        return answered
-    lost = np.flatnonzero(answered.outcome.verdict.lost)
-    if not lost.size:
-        return answered
-    reasons = answered.outcome.verdict.reasons
-    faults = [
-        Fault("bad_sample", f"sample {row + 1}", "; ".join(reasons.get(row, [])), sample=row + 1, line=line)
-        for row in lost[:STRICT_TOLD].tolist()
-    ]
-    total = Fault("bad_sample", "samples", f"{lost.size} of {answered.samples} have no result, and strict=1 was sent")
-    raise Refused(total, *faults)
+def _strictly(answered: Answer, checked: Request, lines: NDArray[Any] | None = None) -> Answer:
+    """Return the answer, or refuse it if it has bad samples and the request insists on good ones."""
+    if checked.options.get("strict") == "1":
+        _refuse_lost([(answered, lines)])
+    return answered
+
+
+def _refuse_lost(parts: Iterable[tuple[Answer, NDArray[Any] | None]]) -> None:
+    """Refuse answers that have samples without result, naming the first of them by sample and line."""
+    faults: list[Fault] = []
+    bad = samples = 0
+    for answered, lines in parts:
+        verdict = answered.outcome.verdict
+        lost = np.flatnonzero(verdict.lost)
+        for row in lost[: LISTED - len(faults)].tolist():
+            reason, line = "; ".join(verdict.reasons.get(row, [])), None if lines is None else int(lines[row])
+            faults.append(Fault("bad_sample", "sample", reason, sample=samples + row + 1, line=line))
+        bad, samples = bad + lost.size, samples + answered.samples
+    if bad:
+        raise BadSamples(faults, bad, samples)
 
 
 def _written(answered: Answer, checked: Request, form: str) -> Response:
@@ -119,12 +142,17 @@ class _Columns:
             each.term: each.values for each in checked.inputs if each.values is not None
         }
         self.columns: list[Input] = [each for each in checked.inputs if each.column is not None and each.term in used]
-        if any(array.size > 1 for array in self.constants.values()):
-            raise Refused(Fault("length", "query", "holds a list beside a table: send one value, or a column"))
+        if lists := [name for name, array in self.constants.items() if array.size > 1]:
+            raise Refused(
+                *(Fault("length", name, "is a list beside a table: send one value, or a column") for name in lists)
+            )
         self.checked = checked
         if sent.table is None:
             raise Refused(Fault("table", "csv", "is not there"))
-        indices = [each.column for each in self.columns if each.column is not None]
+        placed = {each.term: each.column for each in self.columns if each.column is not None}
+        indices = [column.index for column in placed.values()]
+        names = {term: sent.table.header.names[column.index] for term, column in placed.items()}
+        self.labels = {term: f"{term} (column {name})" for term, name in names.items() if term != name}
         self.blocks = sent.table.blocks(indices, decimal_comma=checked.options.get("decimal") == "comma")
 
     def answers(self) -> Iterator[tuple[Block, Answer]]:
@@ -134,7 +162,7 @@ class _Columns:
                 values = dict(self.constants)
                 for each, column in zip(self.columns, block.columns, strict=True):
                     values[each.term] = each.conversion.to_base(column)
-                yield block, answer(self.checked.question, values, len(block.lines), block.bad)
+                yield block, answer(self.checked.question, values, len(block.lines), block.bad, self.labels)
         except TableError as error:
             raise refused_table(error) from error
 
@@ -146,10 +174,12 @@ def _csv_behind(sent: Sent, checked: Request, request: HttpRequest) -> Response:
     header, options = sent.table.header, checked.options
     added = writers.csv_names(checked.question, options.get("headers", "units"))
     plain = {name.partition(" [")[0] for name in added}
+    plain -= {
+        name for name, raw in zip(header.names, header.raw, strict=True) if {name, raw} & {*options.get("ignore", ())}
+    }
     if clash := [name for name in header.names if name in plain]:
-        raise Refused(
-            *(Fault("collision", name, "is also the name of a column to be written: rename it") for name in clash)
-        )
+        cure = "is also the name of a column to be written: rename it, or send ignore={} to pass it through as it is"
+        raise Refused(*(Fault("collision", name, cure.format(name)) for name in clash))
     answers = _Columns(sent, checked).answers()
     first = next(answers, None)
     missing = options.get("missing", "").encode()
@@ -159,10 +189,11 @@ def _csv_behind(sent: Sent, checked: Request, request: HttpRequest) -> Response:
         return answer_lines(block, header.delimiter, numbers, texts, missing)
 
     head = answer_header(header, added)
-    every = chain([first] if first else [], answers)
+    every: Iterable[tuple[Block, Answer]] = chain([first] if first else [], answers)
     if options.get("strict") == "1":
-        whole = [lines(block, _strictly(each, checked)) for block, each in every]
-        return Response(head + b"".join(whole), content_type=CSV_TYPE)
+        every = list(every)
+        _refuse_lost((each, block.line_numbers) for block, each in every)
+        return Response(head + b"".join(lines(block, each) for block, each in every), content_type=CSV_TYPE)
     parts = chain([head], (lines(block, each) for block, each in every))
     if request.environ.get("SERVER_PROTOCOL") == "HTTP/1.0":
         return Response(b"".join(parts), content_type=CSV_TYPE)
@@ -185,4 +216,5 @@ def _whole_table(sent: Sent, checked: Request) -> Answer:
     for block in blocks:
         bad |= {start + row: reason for row, reason in block.bad.items()}
         start += len(block.lines)
-    return _strictly(answer(checked.question, values, samples, bad), checked)
+    numbers = np.concatenate([block.line_numbers for block in blocks])
+    return _strictly(answer(checked.question, values, samples, bad, gathered.labels), checked, numbers)

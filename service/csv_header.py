@@ -111,7 +111,7 @@ def check_encoding(body: bytes) -> None:
                 decoder.decode(body[at : at + PIECE_BYTES], final=at + PIECE_BYTES >= len(body))
             except UnicodeDecodeError as error:
                 line = body.count(b"\n", 0, at - waiting + error.start) + 1
-                text = f"Line {line} is not UTF-8 but latin-1 or another code page: save the file as CSV UTF-8."
+                text = f"Line {line} is not UTF-8 but latin-1 or another code page: save it as CSV UTF-8."
                 raise TableError(400, "encoding", text, line) from None
     if body.count(b"\r") != body.count(b"\r\n") and (bare := re.search(rb"\r(?!\n)", body)):
         line = body.count(b"\n", 0, bare.start()) + 1

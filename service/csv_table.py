@@ -120,6 +120,8 @@ class Table:
         self._first_line = first_line
         self._delimiter = header.delimiter.encode()
         self._between = re.compile(self._delimiter)
+        blanks = b" " if header.delimiter == "\t" else b" \t"
+        self._blank_lines = re.compile(rb"(?:[%b]*+\r?(?:\n|\Z))++" % blanks)
         self._cell = re.compile(rb'("(?:[^"]++|"")*+")?([^\n%b]*+)' % self._delimiter)
 
     def blocks(self, used: Sequence[int], decimal_comma: bool = False, rows: int = 16384) -> Iterator[Block]:
@@ -238,12 +240,19 @@ class Table:
         cell_ends: list[int] = []
         bad: dict[int, str] = {}
         open_quotes: set[int] = set()
-        while begin < min(end + 1, len(self._body)):
+        while True:
+            blank = self._blank_lines.match(self._body, begin)
+            if blank is not None:
+                line += blank[0].count(b"\n")
+                begin = blank.end()
+            if begin >= min(end + 1, len(self._body)):
+                break
             start, first_cell, fault, is_open = begin, len(cell_ends), None, False
             cell_end = self._body.find(b"\n", begin)
             cell_end = len(self._body) if cell_end < 0 else cell_end
             if self._body.find(b'"', begin, cell_end) < 0:
-                cell_ends.extend(found.start() for found in self._between.finditer(self._body, begin, cell_end))
+                between = self._between.finditer(self._body, begin, cell_end)
+                cell_ends.extend(delimiter.start() for delimiter in between)
                 cell_ends.append(cell_end)
             else:
                 cell_end = begin - 1
@@ -253,16 +262,16 @@ class Table:
                     cell_ends.append(cell_end)
             begin = cell_end + 1
             record = self._body[start:cell_end]
-            if len(cell_ends) - first_cell > 1 or record.strip(b" \t\r"):
-                if fault:
-                    bad[len(records)] = fault
-                if is_open:
-                    open_quotes.add(len(records))
-                stop = cell_end - record.endswith(b"\r")
-                records.append((start, stop, line, len(cell_ends) - first_cell, first_cell))
+            if fault:
+                bad[len(records)] = fault
+            if is_open:
+                open_quotes.add(len(records))
+            stop = cell_end - record.endswith(b"\r")
+            records.append((start, stop, line, len(cell_ends) - first_cell, first_cell))
             line += record.count(b"\n") + 1
         starts, stops, lines, counts, first_cells = np.array(records, np.int64).reshape(-1, 5).T
-        return _Layout(starts, stops, lines, counts, first_cells, np.array(cell_ends), begin, line, bad, open_quotes)
+        ends = np.array(cell_ends, np.int64)
+        return _Layout(starts, stops, lines, counts, first_cells, ends, begin, line, bad, open_quotes)
 
     def _cell_end(self, begin: int, start: int, line: int, refuse: bool) -> tuple[int, str | None, bool]:
         """Return where a cell of the record at `start` ends, its quotes' fault, and whether one is open."""
@@ -273,15 +282,17 @@ class Table:
             return cell.end(), None, False
         closed = cell.end(1) >= 0
         lines = body.count(b"\n", begin, cell.end(1) if closed else len(body))
-        if closed and lines <= QUOTED_LINES:
-            stray = cell[2].removesuffix(b"\r")  # a carriage return stands only before a line feed
-            fault = f"text follows the closing quote of cell {shown(cell[0].decode())}" if stray else None
+        stray = cell[2].removesuffix(b"\r")  # a carriage return stands only before a line feed
+        if closed and lines <= QUOTED_LINES and not (lines and stray):
+            text = cell[0].removesuffix(b"\r").decode()
+            fault = f"text follows the closing quote of cell {shown(text)}" if stray else None
             return cell.end(), fault, False
         line += body.count(b"\n", start, begin)
         if refuse and lines > QUOTED_LINES:
             text = f"A quote that opens on line {line} is not closed within {QUOTED_LINES} lines."
             raise TableError(400, "unclosed_quote", text, line)
-        # One stray quote must not swallow the data behind it: the cell ends with its line.
+        # A stray quote, perhaps paired with one lines later, must not swallow the data in between: the cell
+        # ends with its line.
         end = body.find(b"\n", begin)
         return len(body) if end < 0 else end, f"a quote that opens on line {line} is not closed", True
 
@@ -289,7 +300,7 @@ class Table:
         """Say which records are lines without anything but blanks."""
         lead = self._octets.take(starts, mode="clip")
         blank: NDArray[np.bool_] = (counts == 1) & ((starts == stops) | (lead == BLANK) | (lead == TAB))
-        for row in np.flatnonzero(blank):
+        for row in np.flatnonzero(blank & (starts < stops)):
             blank[row] = not self._body[starts[row] : stops[row]].strip(b" \t")
         return blank
 

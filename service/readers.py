@@ -5,6 +5,7 @@ import re
 from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
 from typing import Any
+from urllib.parse import parse_qsl
 
 import orjson
 from flask import Request
@@ -26,8 +27,10 @@ TABLE_CODES = {
     "name_too_long": "too_large",
     "not_a_number": "not_a_number",
 }
+FIELDS_LIMIT = 1000  # of a form
 URL_ONLY = ("form", "errors", "nocache")
-FORM_START = re.compile(rb"\A[A-Za-z_][A-Za-z0-9_.]*=")
+ERRORS = ("problem", "text")
+FORM_START = re.compile(rb"\A[A-Za-z_][A-Za-z0-9_.%+-]*=")
 EXAMPLE = '{"gas": "co2", "water_temperature": [18.4, 18.6], "salinity": [35.1, 35.0]}'
 
 
@@ -49,6 +52,7 @@ def read(request: Request, config: Config) -> Sent:
         With 400, 413 or 415 where the body cannot be read, 422 where a name is repeated.
     """
     query = _single(request.args, "query")
+    _check_errors(query.get("errors"))
     for name in URL_ONLY:
         query.pop(name, None)
     if request.method in ("GET", "HEAD"):
@@ -71,10 +75,16 @@ def _single(pairs: MultiDict[str, str], place: str) -> dict[str, Any]:
     """Return parameters, refusing one that stands twice."""
     found: dict[str, Any] = {}
     for name, values in pairs.lists():
-        if len(values) > 1:
+        if len(values) > 1 and name != "nocache":
             raise Refused(Fault("repeated_name", name[:100], f"stands {len(values)} times in the {place}"))
         found[name] = Text(values[0])
     return found
+
+
+def _check_errors(asked: str | None) -> None:
+    if asked not in (None, *ERRORS):
+        allowed = ", ".join(ERRORS)
+        raise Refused(Fault("unknown_option", "errors", f"must be one of {allowed}", allowed))
 
 
 def _body(request: Request, config: Config) -> bytes:
@@ -93,7 +103,11 @@ def _body(request: Request, config: Config) -> bytes:
     announced = request.content_length
     if announced is not None and announced > limit:
         raise _too_large(announced, limit)
-    body = request.get_data(cache=True, parse_form_data=False)
+    try:
+        body = request.get_data(cache=True, parse_form_data=False)
+    except OSError as error:  # a chunk that is none, or a connection that ended
+        reason = "could not be read to its end: it was cut short, or its chunks are wrong"
+        raise Refused(Fault("cut_short", "body", reason), status=400) from error
     if len(body) > limit:
         raise _too_large(len(body), limit)
     if announced is not None and len(body) < announced:
@@ -107,28 +121,45 @@ def _too_large(size: int, limit: int) -> Refused:
 
 
 def _recognise(request: Request, body: bytes, config: Config) -> Sent:
-    if request.mimetype == "multipart/form-data":
-        return _from_form(_form_fields(request), config)
-    start = body.lstrip(b"\xef\xbb\xbf \t\r\n")[:1]
-    if start in (b"{", b"["):
+    if request.mimetype == "multipart/form-data" and (found := _parts(request)):
+        return _from_form(found, config)
+    if _is_json(body):
         return Sent("json", _from_json(body, config))
     declared = request.mimetype == "application/x-www-form-urlencoded"
-    if FORM_START.match(body) and (declared or b"\n" not in body):
-        if not declared:
-            request.environ["CONTENT_TYPE"] = "application/x-www-form-urlencoded"
-        return _from_form(_form_fields(request), config)
-    if request.mimetype == "application/json" or request.mimetype.endswith("+json"):
+    if FORM_START.match(body) and (declared or b"\n" not in body.strip()) and (fields := _fields(body)):
+        return _from_form(fields, config)
+    if body.startswith(b"--"):
+        reason = "looks like multipart, but its parts cannot be read: is the boundary in the Content-Type?"
+        raise Refused(Fault("unreadable", "body", reason), status=400)
+    if request.mimetype.endswith("json") and b"\n" not in body.strip():
         return Sent("json", _from_json(body, config))
     return Sent("csv", {}, _from_csv(body, config))
 
 
-def _form_fields(request: Request) -> dict[str, Any]:
+def _is_json(body: bytes) -> bool:
+    return body[:1000].lstrip(b"\xef\xbb\xbf \t\r\n")[:1] in (b"{", b"[")
+
+
+def _fields(body: bytes) -> dict[str, Any]:
+    """Return the fields of a form; none where it is not UTF-8."""
+    try:
+        text = body.decode().rstrip("\r\n")
+    except UnicodeDecodeError:
+        return {}
+    if text.count("&") >= FIELDS_LIMIT:
+        raise Refused(Fault("too_large", "body", "holds too many fields", f"{FIELDS_LIMIT} fields"), status=413)
+    return _single(MultiDict(parse_qsl(text, keep_blank_values=True)), "form")
+
+
+def _parts(request: Request) -> dict[str, Any]:
+    """Return the fields and files of a multipart body; none where it cannot be read."""
     found = _single(request.form, "form")
     for name, files in request.files.lists():
-        key = name if name in ("csv", "json") else "csv"
+        content = files[0].read()
+        key = name if name in ("csv", "json") else "json" if _is_json(content) else "csv"
         if len(files) > 1 or key in found:
             raise Refused(Fault("repeated_name", name[:100], "stands twice in the form"))
-        found[key] = files[0].read()
+        found[key] = content
     return found
 
 
@@ -178,10 +209,9 @@ def _from_json(body: bytes, config: Config) -> dict[str, Any]:
         document = orjson.loads(body.removeprefix(b"\xef\xbb\xbf"))
     except orjson.JSONDecodeError as error:
         document = _lenient(body, error)
-    if isinstance(document, list):
-        raise Refused(Fault("unreadable", "body", "is an array: send an object of columns", EXAMPLE))
     if not isinstance(document, dict):
-        raise Refused(Fault("unreadable", "body", "is not an object", EXAMPLE))
+        what = "an array" if isinstance(document, list) else "not an object"
+        raise Refused(Fault("unreadable", "body", f"is {what}: send one object, its values arrays of columns", EXAMPLE))
     if body.count(b'"') != 2 * _strings(document) or b"\\" in body:
         _refuse_repeated(body)
     return document
@@ -194,7 +224,8 @@ def _lenient(body: bytes, error: orjson.JSONDecodeError) -> Any:
             return json.loads(body, parse_constant=_constant, parse_int=float)
         except (ValueError, RecursionError):
             pass
-    reason = f"is not JSON: {str(error)[:120]}"
+    hint = "; a missing number is null" if b"Infinity" in body else ""
+    reason = f"is not JSON: {str(error)[:120]}{hint}"
     raise Refused(Fault("unreadable", "body", reason), status=400) from error
 
 
@@ -204,13 +235,13 @@ def _constant(word: str) -> None:
 
 
 def _strings(document: Mapping[str, Any]) -> int:
-    """Return how many strings a flat document holds, those inside lists left out."""
+    """Return how many strings a document holds as its keys and values and those of its objects, but no deeper."""
     count = len(document)
     for value in document.values():
         if isinstance(value, str):
             count += 1
         elif isinstance(value, dict):
-            count += _strings(value)
+            count += len(value) + sum(isinstance(inner, str) for inner in value.values())
     return count
 
 
@@ -226,4 +257,4 @@ def _refuse_repeated(body: bytes) -> None:
     try:
         json.loads(body, object_pairs_hook=pairs, parse_int=float, parse_constant=_constant)
     except (RecursionError, ValueError) as error:
-        raise Refused(Fault("unreadable", "body", "is not JSON that can be read"), status=400) from error
+        raise Refused(Fault("unreadable", "body", "is JSON that nests too deep to be read"), status=400) from error

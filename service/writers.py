@@ -8,9 +8,10 @@ import numpy as np
 import orjson
 
 from service.config import service_version
-from service.physics.declare import Array
+from service.physics.answer import Answer, Outcome
+from service.physics.declare import TERMS, Array
 from service.physics.judge import Verdict
-from service.physics.question import Answer, Outcome, Question, Wanted
+from service.physics.question import Question, Wanted
 
 SERVICE = {"name": "catspaw", "version": service_version()}
 THREE_DECIMALS = re.compile(r"\.(\d{3})(?=$|[eE])")
@@ -41,13 +42,33 @@ def _quality(verdict: Verdict) -> dict[str, Any]:
     return {"flags": verdict.flags, "reasons": reasons}
 
 
+def _steps(outcome: Outcome) -> list[dict[str, Any]]:
+    """Return the calculation in order, each number with its unit, formula and source."""
+    told = []
+    for each in outcome.chain:
+        name, _, at = each.key.partition("@")
+        source = each.step.source if each.step else None
+        entry: dict[str, Any] = {"name": name, "values": np.ascontiguousarray(each.values), "unit": TERMS[name].unit}
+        if at:
+            entry["evaluated_with"] = dict(part.split("=") for part in at.split(","))
+        entry["method"] = each.step.method if each.step else None
+        entry["formula"] = each.how
+        entry["source"] = source.citation if source else None
+        entry["doi"] = source.doi if source else None
+        told.append(entry)
+    return told
+
+
 def _outcome(question: Question, outcome: Outcome, spread: Mapping[str, Array]) -> dict[str, Any]:
-    return {
+    told: dict[str, Any] = {
         "results": {
             each.name: _result(each, outcome.results[each.name], spread.get(each.name)) for each in question.wanted
         },
         "quality": _quality(outcome.verdict),
     }
+    if outcome.chain:
+        told["steps"] = _steps(outcome)
+    return told
 
 
 def json_bytes(answer: Answer, detail: str = "full") -> bytes:

@@ -1,15 +1,13 @@
 """What there is: gases, methods and sources, told from their declarations."""
 
-from collections.abc import Mapping
+from collections.abc import Collection, Mapping
 from typing import Any
 
 from service.physics.bibtex import bibtex
+from service.physics.check import evidence
 from service.physics.declare import (
-    COEFFICIENTS,
-    DERIVED,
     FAMILIES,
     GASES,
-    SIDES,
     STEPS,
     TERMS,
     Block,
@@ -19,7 +17,17 @@ from service.physics.declare import (
     Step,
     Uncertainty,
 )
-from service.physics.methods import GIVEN, TRANSFER_FAMILY, default_method, methods_for, transfer_methods
+from service.physics.methods import (
+    ALWAYS_GIVEN,
+    GIVEN,
+    TRANSFER_FAMILY,
+    Chooser,
+    default_method,
+    methods_for,
+    transfer_methods,
+    wanting,
+    ways_of,
+)
 from service.physics.sources import SOURCES
 
 
@@ -105,6 +113,7 @@ def gas_record(gas: Gas) -> dict[str, Any]:
         for name in methods_for(gas, family):
             step, block = _leading(gas, family.results, name)
             record = _method_record(step, block, name == default_method(gas, family))
+            record["evidence"] = evidence(family.name, name, gas.name if step.needs_coefficients else None)
             methods.setdefault(family.option, []).append(record)
     return {
         "name": gas.name,
@@ -128,38 +137,24 @@ def _leading(gas: Gas, results: tuple[str, ...], method: str) -> tuple[Step, Blo
 
 
 def own_inputs(name: str) -> tuple[str, ...]:
-    """Return the inputs that a parameterisation needs beyond those of every one."""
-    reached: set[str] = set()
-    step = transfer_methods()[name]
-    ahead = [parameter for parameter in step.parameters if parameter != COEFFICIENTS]
-    while ahead:
-        term = ahead.pop()
-        if term in reached:
-            continue
-        reached.add(term)
-        if term in DERIVED:
-            ahead += [DERIVED[term].of, *DERIVED[term].replace.values()]
-            continue
-        if TERMS[term].is_input:
-            continue
-        by_method = STEPS.get(term, {})
-        for steps in by_method.values():
-            for each in steps[-1:]:
-                ahead += [p for p in each.parameters if p != COEFFICIENTS]
-    return tuple(t for t in TERMS if t in reached and TERMS[t].is_input and t not in _anyway())
+    """Return the inputs of a parameterisation beyond those of every one."""
+    given = ways_of(transfer_methods()[name].results[0], name)
+    choose = Chooser(_first_gas(name), given, {TRANSFER_FAMILY: name})
+    leaves = choose.leaves(TRANSFER_FAMILY)
+    return tuple(leaf for leaf in leaves if choose.constant(leaf) is None and leaf not in ALWAYS_GIVEN)
 
 
-def _anyway() -> set[str]:
-    """Return the inputs that a caller is asked for whatever the parameterisation."""
-    sides = {name for side in SIDES.values() for name in side.members}
-    return sides | {
-        "water_temperature",
-        "salinity",
-        "wind_height",
-        "latitude",
-        "longitude",
-        "barometer_height",
-    }
+def _first_gas(name: str) -> Gas:
+    family = FAMILIES[TRANSFER_FAMILY]
+    return next(gas for gas in GASES.values() if name in methods_for(gas, family))
+
+
+def _exponent(step: Step) -> float | str | None:
+    """Return a method's Schmidt exponent, a word where it varies, None where k is no power of the Schmidt number."""
+    if step.results[0] != FAMILIES[TRANSFER_FAMILY].results[0]:
+        return None
+    own = step.method in STEPS.get("schmidt_exponent", {})
+    return step.supplies.get("schmidt_exponent", "depends on wind speed" if own else TERMS["schmidt_exponent"].default)
 
 
 def parameterisation_record(name: str) -> dict[str, Any]:
@@ -171,7 +166,7 @@ def parameterisation_record(name: str) -> dict[str, Any]:
         "inputs": list(own_inputs(name)),
         "formula": step.formula,
         "schmidt_number_reference": step.supplies.get("reference_schmidt_number"),
-        "schmidt_exponent": step.supplies.get("schmidt_exponent", "depends on wind speed"),
+        "schmidt_exponent": _exponent(step),
         "wind_averaging": step.wind_averaging,
         "range": _ranges(step.valid),
         "range_kind": step.range_kind,
@@ -183,24 +178,38 @@ def parameterisation_record(name: str) -> dict[str, Any]:
         "note": step.note or None,
         "equation": step.equation,
         "source": source_brief(step.source),
+        "evidence": evidence(TRANSFER_FAMILY, name),
     }
 
 
 def parameterisations(
-    water: str | None = None, wind_speed: float | None = None, gas: str | None = None
+    water: str | None = None,
+    wind_speed: float | None = None,
+    gas: str | None = None,
+    inputs: Collection[str] | None = None,
 ) -> list[dict[str, Any]]:
-    """Return the transfer velocity methods that fit a water, a wind speed and a gas, all where none is given."""
+    """Return the transfer velocity methods that fit what is known, all where nothing is.
+
+    Parameters
+    ----------
+    water : str, optional
+        The kind of water they are made for.
+    wind_speed : float, optional
+        At 10 m, within their range. [m s-1]
+    gas : str, optional
+        For which they have coefficients.
+    inputs : collection of str, optional
+        What is at hand besides temperature and salinity; they need no more.
+    """
     family = FAMILIES[TRANSFER_FAMILY]
-    names = methods_for(GASES[gas], family) if gas else list(transfer_methods())
-    found = []
-    for name in sorted(names):
-        if name == GIVEN:
-            continue
+    names = methods_for(GASES[gas], family) if gas else transfer_methods()
+
+    def fits(name: str) -> bool:
         step = transfer_methods()[name]
         low, high = step.valid.get("wind_speed_10m", (float("-inf"), float("inf")))
-        if water is not None and water not in step.water:
-            continue
-        if wind_speed is not None and not low <= wind_speed <= high:
-            continue
-        found.append(parameterisation_record(name))
-    return found
+        made_for_it = water is None or not step.water or water in step.water
+        within = wind_speed is None or low <= wind_speed <= high
+        enough = inputs is None or not wanting(GASES[gas] if gas else _first_gas(name), inputs, name)
+        return made_for_it and within and enough
+
+    return [parameterisation_record(name) for name in sorted(names) if name != GIVEN and fits(name)]

@@ -90,6 +90,7 @@ class Term:
     holds: Literal["sample", "request"] = "sample"
     per_litre: str | None = None
     example: float | None = None
+    used_with: tuple[str, ...] = ()
     of_gas: bool = False
 
 
@@ -101,6 +102,8 @@ class Remark:
     terms: tuple[str, ...]
     applies: Callable[..., NDArray[np.bool_]]
     flag: int = 3
+    if_given: tuple[str, ...] = ()
+    unless_given: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -113,6 +116,9 @@ class Step:
     name: str
     method: str | None = None
     way: str | None = None
+    beside: tuple[str, ...] = ()
+    needs_given: tuple[str, ...] = ()
+    gases: tuple[str, ...] = ()
     source: Source | None = None
     equation: str = ""
     formula: str = ""
@@ -124,6 +130,7 @@ class Step:
     water: tuple[str, ...] = ()
     wind_averaging: Literal["short", "second moment", "long-term"] | None = None
     variant_of: str | None = None
+    in_all: bool = True
     replaced_by: str | None = None
     remarks: tuple[Remark, ...] = ()
     same_as: str | None = None
@@ -191,6 +198,9 @@ class Gas:
         return None
 
 
+NO_GAS = Gas("", "", "no gas", 1.0, ())  # stands where a quantity is not one of a gas
+
+
 @dataclass(frozen=True, slots=True)
 class Derived:
     """A term that is another one evaluated with some of its inputs replaced."""
@@ -219,7 +229,7 @@ class Quantity:
     sides: tuple[str, ...] = ()
     needs_side: Mapping[str, str] = field(default_factory=dict)
     units: Mapping[str, str] = field(default_factory=dict)
-    families: tuple[str, ...] = ()
+    of_gas: bool = True
 
 
 TERMS: dict[str, Term] = {}
@@ -227,6 +237,8 @@ STEPS: dict[str, dict[str | None, list[Step]]] = {}
 FAMILIES: dict[str, Family] = {}
 FAMILY_OF: dict[str, Family] = {}
 DERIVED: dict[str, Derived] = {}
+STAND_INS: dict[str, str] = {}
+AVERAGING: dict[str, tuple[Remark, ...]] = {}
 SIDES: dict[str, Side] = {}
 GASES: dict[str, Gas] = {}
 QUANTITIES: dict[str, Quantity] = {}
@@ -290,6 +302,16 @@ def derived(name: str, of: str, **replace: str) -> None:
     _file(DERIVED, name, Derived(of, MappingProxyType(replace)))
 
 
+def stand_in(term: str, other: str) -> None:
+    """Declare that a term takes the place of another one, but in steps that are `in_situ`."""
+    _file(STAND_INS, other, term)
+
+
+def averaging(kind: str, *remarks: Remark) -> None:
+    """Declare what is remarked on wherever a method made for winds averaged in one way is used."""
+    _file(AVERAGING, kind, remarks)
+
+
 def gas(record: Gas) -> Gas:
     """File a gas."""
     _file(GASES, record.name, record)
@@ -304,7 +326,7 @@ def quantity(record: Quantity) -> Quantity:
 
 def _add(record: Step, result: str) -> None:
     ways = STEPS.setdefault(result, {}).setdefault(record.method, [])
-    if any(other.way == record.way for other in ways):
+    if any((other.way, other.beside, other.gases) == (record.way, record.beside, record.gases) for other in ways):
         raise DeclarationError(f"{result} by {record.method or record.name} is declared twice")
     ways.append(record)
 

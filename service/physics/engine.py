@@ -1,15 +1,16 @@
 """The engine: finds the steps that lead from what is given to what is wanted, and runs them."""
 
-from collections.abc import Callable, Iterable, Mapping
+from collections.abc import Iterable, Mapping
 from functools import lru_cache
 from typing import Any
 
 import numpy as np
 
-from service.physics.declare import COEFFICIENTS, DERIVED, GASES, TERMS, Array, DeclarationError, Remark, Step
-from service.physics.methods import Chooser, terms_of
+from service.physics.declare import DERIVED, GASES, NO_GAS, STAND_INS, TERMS, Array, Remark, Step
+from service.physics.methods import Chooser, bind, terms_of
 from service.physics.plans import Node, Plan, Range
 
+Shared = dict[tuple[Any, ...], Any]  # outcomes by step and the very arrays that went in, for plans run on one input
 Swap = Mapping[str, str]  # terms that stand in for others in a part of the plan
 
 
@@ -40,7 +41,7 @@ class _Planner:
 
     def _find(self, term: str, swap: Swap, suffix: str) -> str:
         if term in DERIVED and term not in self.choose.given:
-            return self.visit(DERIVED[term].of, {**DERIVED[term].replace, **swap})
+            return self.visit(DERIVED[term].of, {**swap, **DERIVED[term].replace})
         if step := self.choose.select(term):
             return self._place(term, step, swap, suffix)
         constant = None if term in self.choose.given else self.choose.constant(term)
@@ -57,8 +58,9 @@ class _Planner:
         return term
 
     def _place(self, term: str, step: Step, swap: Swap, suffix: str) -> str:
-        for assumed in step.assumes:
-            self._leaf(assumed)
+        for name in step.assumes:
+            self._leaf(name)
+        self.missing.update(dict.fromkeys(name for name in step.needs_given if name not in self.choose.given))
         around = {} if step.in_situ else swap
         arguments = tuple(self.visit(name, around) for name in terms_of(step))
         self.records[step] = None
@@ -67,7 +69,7 @@ class _Planner:
             return arguments[0]
         results = tuple(name + suffix for name in step.results)
         if results not in self.nodes:
-            self.nodes[results] = Node(step, self._bind(step, term), arguments, results)
+            self.nodes[results] = Node(step, bind(step, term, self.choose.gas), arguments, results)
         return term + suffix
 
     def _note(self, step: Step, term: str, swap: Swap) -> None:
@@ -76,21 +78,12 @@ class _Planner:
         for ranges, recommended in ((stated, False), (step.recommended, True)):
             for name, limits in ranges.items():
                 self.ranges[Range(step, name, self.visit(name, swap), limits, recommended)] = None
-        for remark in step.remarks:
+        for remark in self.choose.remarks(step):
             self.remarks[remark, tuple(self.visit(name, swap) for name in remark.terms)] = None
-
-    def _bind(self, step: Step, term: str) -> Callable[..., Any]:
-        if not step.needs_coefficients:
-            return step.function
-        block = self.choose.gas.block(term, step.method)
-        if block is None or step.parameters[0] != COEFFICIENTS:
-            raise DeclarationError(f"{step.name} must take the coefficients first")
-        function, coefficients = step.function, block.coefficients
-        return lambda *values: function(coefficients, *values)
 
     def plan(self, wanted: Iterable[str]) -> Plan:
         """Return the plan for the wanted terms."""
-        keys = {term: self.visit(term, {}) for term in wanted}
+        keys = {term: self.visit(term, STAND_INS) for term in wanted}
         given = self.choose.given
         return Plan(
             tuple(self.nodes.values()),
@@ -119,10 +112,10 @@ def plan(wanted: tuple[str, ...], given: frozenset[str], chosen: tuple[tuple[str
     gas : str
         The name of the gas.
     """
-    return _Planner(Chooser(GASES[gas], given, dict(chosen))).plan(wanted)
+    return _Planner(Chooser(GASES.get(gas, NO_GAS), given, dict(chosen))).plan(wanted)
 
 
-def run(steps: Plan, values: Mapping[str, Array]) -> dict[str, Array]:
+def run(steps: Plan, values: Mapping[str, Array], shared: Shared | None = None) -> dict[str, Array]:
     """Run a plan on (1,) or (N,) arrays and return every number by its key. NaN in, NaN out.
 
     Parameters
@@ -131,13 +124,20 @@ def run(steps: Plan, values: Mapping[str, Array]) -> dict[str, Array]:
         What to run.
     values : mapping of str to array
         The inputs, in the unit of their term.
+    shared : dict, optional
+        What other plans have computed from the same inputs; added to.
     """
     known = {name: np.array([value]) for name, value in steps.defaults.items()}
     known |= steps.constants
     known |= values
     with np.errstate(all="ignore"):
         for node in steps.nodes:
-            outcome = node.function(*[known[key] for key in node.arguments])
+            arrays = [known[key] for key in node.arguments]
+            called = (node.step, node.results, *map(id, arrays))
+            if shared is None or (outcome := shared.get(called)) is None:
+                outcome = node.function(*arrays)
+            if shared is not None:
+                shared[called] = outcome
             if len(node.results) == 1:
                 known[node.results[0]] = outcome
             else:

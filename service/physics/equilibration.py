@@ -5,6 +5,8 @@ import numpy as np
 from service.physics.constants import LN_2, METRES_PER_DAY
 from service.physics.declare import Array, Remark, step
 
+SECONDS_PER_DAY = 86400.0
+
 NO_OPEN_WATER = Remark(
     "no open water: nothing is exchanged, so there is no time",
     ("open_water_fraction",),
@@ -15,7 +17,7 @@ NO_OPEN_WATER = Remark(
 
 @step(
     "equilibration_time",
-    formula="tau = h / (A K) storage_ratio",
+    formula="1/tau = A K / (h storage_ratio) + decay_constant",
     remarks=(NO_OPEN_WATER,),
 )
 def equilibration_time(
@@ -23,6 +25,7 @@ def equilibration_time(
     open_water_fraction: Array,
     total_transfer_velocity: Array,
     storage_ratio: Array,
+    decay_constant: Array,
 ) -> Array:
     """Return the e-folding time of a disequilibrium of the mixed layer.
 
@@ -36,6 +39,8 @@ def equilibration_time(
         [cm h-1]
     storage_ratio : (...) array
         Change of the stored substance over change of the dissolved gas. [1]
+    decay_constant : (...) array
+        Zero for a gas that does not decay. [s-1]
 
     Returns
     -------
@@ -47,7 +52,8 @@ def equilibration_time(
     Common practice: k is about 3 m per day, so about 33 days for a column of 100 m.
     """
     velocity = open_water_fraction * total_transfer_velocity * METRES_PER_DAY
-    return mixed_layer_depth / velocity * storage_ratio
+    by_exchange = mixed_layer_depth / velocity * storage_ratio
+    return by_exchange / (1.0 + decay_constant * SECONDS_PER_DAY * by_exchange)
 
 
 @step("half_time", formula="tau ln 2")

@@ -62,7 +62,7 @@ def evasion(
 def invasion(
     open_water_fraction: Array,
     total_transfer_velocity: Array,
-    solubility_per_litre: Array,
+    solubility_per_litre_at_skin: Array,
     fugacity_in_air: Array,
     bubble_injection: Array,
 ) -> Array:
@@ -74,7 +74,7 @@ def invasion(
         [1]
     total_transfer_velocity : (...) array
         [cm h-1]
-    solubility_per_litre : (...) array
+    solubility_per_litre_at_skin : (...) array
         [mol L-1 atm-1]
     fugacity_in_air : (...) array
         [uatm]
@@ -86,7 +86,9 @@ def invasion(
     (...) array
         [mmol m-2 d-1]
     """
-    through_surface = evasion(open_water_fraction, total_transfer_velocity, solubility_per_litre, fugacity_in_air)
+    through_surface = evasion(
+        open_water_fraction, total_transfer_velocity, solubility_per_litre_at_skin, fugacity_in_air
+    )
     return through_surface + open_water_fraction * bubble_injection
 
 

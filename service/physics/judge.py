@@ -62,7 +62,7 @@ def _rows(mask: NDArray[np.bool_], samples: int) -> Iterable[int]:
     return range(samples) if mask.size == 1 and samples > 1 and mask[0] else np.flatnonzero(mask)
 
 
-def judge(values: dict[str, Array], samples: int) -> Verdict:
+def judge(values: dict[str, Array], samples: int, labels: Mapping[str, str]) -> Verdict:
     """Flag what is missing or impossible in the inputs and blank it there.
 
     Parameters
@@ -71,6 +71,8 @@ def judge(values: dict[str, Array], samples: int) -> Verdict:
         Inputs by name, in the unit of their term; an array with something impossible is replaced by a copy.
     samples : int
         How many samples there are.
+    labels : mapping of str to str
+        How the sender knows an input, where not by its own name.
 
     Returns
     -------
@@ -85,13 +87,14 @@ def judge(values: dict[str, Array], samples: int) -> Verdict:
         if (smallest > low if term.above_lower_limit else smallest >= low) and largest <= high:
             continue
         missing = np.isnan(array)
-        verdict.mark(_rows(missing, samples), MISSING, f"{name} is missing")
+        label = labels.get(name, name)
+        verdict.mark(_rows(missing, samples), MISSING, f"{label} is missing")
         within = (array > low if term.above_lower_limit else array >= low) & (array <= high)
         impossible = ~within & ~missing
         if impossible.any():
             allowed = possible_text(term)
             told = {
-                row: f"{name} {number_text(array[row if array.size > 1 else 0])} is impossible: {allowed}"
+                row: f"{label} {number_text(array[row if array.size > 1 else 0])} is impossible: {allowed}"
                 for row in _rows(impossible, samples)
             }
             verdict.mark(told, BAD, told)
@@ -132,6 +135,9 @@ def _judge_range(verdict: Verdict, entry: Range, array: Array, samples: int) -> 
     if array.min() >= low and array.max() <= high:
         return
     outside = (array < low) | (array > high)
+    if entry.recommended and entry.term in entry.step.valid:
+        widest = entry.step.valid[entry.term]  # beyond it the range itself has been told
+        outside &= (array >= widest[0]) & (array <= widest[1])
     if not outside.any():
         return
     term, method = TERMS[entry.term], entry.step.method or entry.step.name

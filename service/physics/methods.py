@@ -1,9 +1,11 @@
 """Which methods there are for a gas, and which of them gives a term where some inputs are known."""
 
-from collections.abc import Collection, Iterable, Mapping
+from collections.abc import Callable, Collection, Iterable, Mapping
 from functools import lru_cache
+from typing import Any
 
 from service.physics.declare import (
+    AVERAGING,
     COEFFICIENTS,
     DERIVED,
     FAMILIES,
@@ -14,11 +16,14 @@ from service.physics.declare import (
     DeclarationError,
     Family,
     Gas,
+    Remark,
     Step,
 )
 
 TRANSFER_FAMILY = "transfer_velocity"
 GIVEN = "given"  # stands for a method where the caller brings the numbers
+ALWAYS_GIVEN = ("water_temperature", "salinity")  # what says of a method nothing that is its own
+LONG_TERM, LONG_TERM_FROM = "long-term", 28 * 86400.0  # s, the shortest month
 
 
 def methods_for(gas: Gas, family: Family) -> list[str]:
@@ -55,6 +60,68 @@ def methods_for_water(gas: Gas, water: str | None) -> list[str]:
     return [name for name in names if water is None or water in transfer_methods()[name].water]
 
 
+def method_by_input(given: Collection[str]) -> tuple[str, str] | None:
+    """Return the transfer velocity method that an input chooses by itself, and that input; None where none does."""
+    for method, ways in STEPS.get(FAMILIES[TRANSFER_FAMILY].results[0], {}).items():
+        for way in (step.way for step in ways):
+            if method and way in given:
+                return method, str(way)
+    return None
+
+
+def ways_of(term: str, method: str | None) -> tuple[str, ...]:
+    """Return the inputs by any one of which a method gives a term; none where it needs no certain one."""
+    ways = [step.way for step in STEPS.get(term, {}).get(method, ())]
+    return tuple(way for way in ways if way) if None not in ways else ()
+
+
+def methods_giving(term: str, gas: Gas) -> tuple[str, ...]:
+    """Return the methods that give a term for a gas."""
+    by_method = STEPS.get(term, {}).items()
+    return tuple(method for method, ways in by_method if method and any(_available(way, term, gas) for way in ways))
+
+
+def wanting(gas: Gas, given: Collection[str], method: str) -> tuple[str, ...]:
+    """Return what a transfer velocity method lacks for a gas, beyond temperature and salinity, where some is given."""
+    choose = Chooser(gas, {*given, *ALWAYS_GIVEN}, {TRANSFER_FAMILY: method})
+    return tuple(name for name in choose.leaves(TRANSFER_FAMILY) if choose.lacks(name))
+
+
+def applicable(gas: Gas, water: str, given: Collection[str], wind_averaging: float | None) -> tuple[str, ...]:
+    """Return the transfer velocity methods that stand side by side for a water and the inputs at hand.
+
+    Left out are forms for long-term winds unless the wind is a mean over a month or longer, variants of one base, of
+    several from one paper all but the recommended, and what has been replaced.
+
+    Parameters
+    ----------
+    gas : Gas
+        Of which gas.
+    water : str
+        The kind of water; a method of the caller's own is of any.
+    given : collection of str
+        Inputs sent.
+    wind_averaging : float or None
+        What the wind is averaged over. [s]
+
+    Returns
+    -------
+    tuple of str
+        In order of declaration.
+    """
+    own = method_by_input(given)
+    long_term = wind_averaging is not None and wind_averaging >= LONG_TERM_FROM
+
+    def fits(name: str) -> bool:
+        record = transfer_methods()[name]
+        made_for_it = water in record.water or (own is not None and own[0] == name)
+        first_of_its_kind = record.in_all and record.variant_of is None and record.replaced_by is None
+        in_season = long_term or record.wind_averaging != LONG_TERM
+        return made_for_it and first_of_its_kind and in_season and not wanting(gas, given, name)
+
+    return tuple(name for name in methods_for(gas, FAMILIES[TRANSFER_FAMILY]) if name != GIVEN and fits(name))
+
+
 def side_of(term: str) -> str | None:
     """Return the side that can give a term, for telling a caller what is missing."""
     ways = {step.way for steps in STEPS.get(term, {}).values() for step in steps}
@@ -66,7 +133,25 @@ def terms_of(step: Step) -> tuple[str, ...]:
     return tuple(name for name in step.parameters if name != COEFFICIENTS)
 
 
+def remarks_of(step: Step) -> tuple[Remark, ...]:
+    """Return what may have to be remarked on where a step is used: its own, and those of its wind averaging."""
+    return (*step.remarks, *AVERAGING.get(step.wind_averaging or "", ()))
+
+
+def bind(step: Step, term: str, gas: Gas) -> Callable[..., Any]:
+    """Return a step's function, with the gas's coefficients closed over where it takes any."""
+    if not step.needs_coefficients:
+        return step.function
+    block = gas.block(term, step.method)
+    if block is None or step.parameters[0] != COEFFICIENTS:
+        raise DeclarationError(f"{step.name} must take the coefficients first")
+    function, coefficients = step.function, block.coefficients
+    return lambda *values: function(coefficients, *values)
+
+
 def _available(step: Step, result: str, gas: Gas) -> bool:
+    if step.gases and gas.name not in step.gases:
+        return False
     return not step.needs_coefficients or gas.block(result, step.method) is not None
 
 
@@ -97,9 +182,14 @@ class Chooser:
             ways = [s for s in STEPS.get(term, {}).get(method, ()) if _available(s, term, self.gas)]
             for known in (self.given, self.defaults, (None,)):
                 for step in ways:
-                    if step.way in known:
+                    if step.way in known and set(step.beside) <= set(self.given):
                         return step
         return None
+
+    def remarks(self, step: Step) -> list[Remark]:
+        """Return the remarks of a step that apply to what is given."""
+        given = set(self.given)
+        return [r for r in remarks_of(step) if given.issuperset(r.if_given) and given.isdisjoint(r.unless_given)]
 
     def constant(self, term: str) -> float | None:
         """Return the constant that the gas, the method chosen for the term's family, or the term itself brings."""
@@ -127,6 +217,16 @@ class Chooser:
             return (DERIVED[term].of, *DERIVED[term].replace.values())
         step = self.select(term)
         return terms_of(step) if step else ()
+
+    def leaves(self, term: str) -> list[str]:
+        """Return the terms that a term depends on here and that no step gives, in the order of the vocabulary."""
+        cone = self.cone(term)
+        return [name for name in TERMS if name in cone and name not in DERIVED and self.select(name) is None]
+
+    def lacks(self, leaf: str) -> bool:
+        """Tell whether a leaf is neither given nor brought by gas or method nor has a default."""
+        known = leaf in self.given or leaf in self.defaults or self.constant(leaf) is not None
+        return not known and TERMS[leaf].default is None
 
     def same(self, term: str) -> str:
         """Return the term that a term is only another name for here, or itself."""

@@ -6,11 +6,16 @@ from types import ModuleType
 
 import service.physics.air_side
 import service.physics.equilibration
+import service.physics.equilibrator
 import service.physics.flux
+import service.physics.instrument_terms
+import service.physics.interface
 import service.physics.seawater
 import service.physics.sides
 import service.physics.terms
-import service.physics.wind  # noqa: F401  imported for what they declare
+import service.physics.transfer_terms
+import service.physics.wind
+import service.physics.wind_moments  # noqa: F401  imported for what they declare
 from service.physics import gases, schmidt_number, solubility, transfer_velocity
 from service.physics.declare import Quantity, quantity
 
@@ -44,7 +49,12 @@ SOLUBILITY = quantity(
 )
 
 SCHMIDT_NUMBER = quantity(
-    Quantity("schmidt-number", "Schmidt number of the gas in this water", results=("schmidt_number",))
+    Quantity(
+        "schmidt-number",
+        "Schmidt number of the gas in this water",
+        results=("schmidt_number",),
+        more=("kinematic_viscosity", "diffusivity", "diffusivity_in_fresh_water"),
+    )
 )
 
 TRANSFER_VELOCITY = quantity(
@@ -52,7 +62,8 @@ TRANSFER_VELOCITY = quantity(
         "transfer-velocity",
         "Gas transfer (piston) velocity",
         results=(*TRANSFER, "schmidt_number", "wind_speed_10m"),
-        more=("friction_velocity_air", "total_transfer_velocity"),
+        more=("friction_velocity_air", "total_transfer_velocity", "steady_state_supersaturation"),
+        needs_side={"wind_speed_10m": "wind_speed"},
     )
 )
 
@@ -84,7 +95,10 @@ FLUX = quantity(
             "water_vapour_pressure",
             "friction_velocity_air",
             "density",
+            "bubble_injection",
+            "steady_state_supersaturation",
         ),
+        needs_side={"wind_speed_10m": "wind_speed"},
         sides=("water_side", "air_side"),
         units={"solubility": "mol L-1 atm-1"},
     )

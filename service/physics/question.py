@@ -1,6 +1,6 @@
 """A question as it was asked, checked against what the methods need, and its answer."""
 
-from collections.abc import Iterable, Iterator, Mapping
+from collections.abc import Iterable, Mapping
 from dataclasses import dataclass, replace
 from functools import lru_cache
 from typing import Any
@@ -8,15 +8,26 @@ from typing import Any
 import numpy as np
 
 from service.physics import quantities  # noqa: F401  imported for what it declares
-from service.physics.declare import FAMILIES, FAMILY_OF, SIDES, TERMS, Array, Gas, Quantity, Remark, Step
-from service.physics.engine import plan, run
+from service.physics.declare import FAMILIES, FAMILY_OF, SIDES, TERMS, Gas, Quantity, Remark, Step
+from service.physics.engine import plan
 from service.physics.faults import Fault, Refused
-from service.physics.judge import BAD, SUSPECT, Verdict, judge, judge_results
-from service.physics.methods import GIVEN, TRANSFER_FAMILY, default_method, methods_for_water, side_of, transfer_methods
+from service.physics.methods import (
+    GIVEN,
+    LONG_TERM,
+    TRANSFER_FAMILY,
+    default_method,
+    method_by_input,
+    methods_for_water,
+    methods_giving,
+    side_of,
+    transfer_methods,
+    ways_of,
+)
 from service.physics.plans import Plan
 from service.physics.terms import INLAND
 from service.physics.units import Conversion, UnitError, conversion
 
+SEA_LEVEL_PRESSURE = (870.0, 1085.0)  # hPa, the records at sea level, WMO archive of weather extremes (from memory)
 FRESH_FOR_THE_SEA = 5.0  # practical salinity under which a sample without `water` is not taken for the sea
 
 
@@ -41,25 +52,6 @@ class Question:
     used: frozenset[str]
     assumed: Mapping[str, dict[str, Any]]
     methods: Mapping[str, list[dict[str, Any]]]
-
-
-@dataclass(frozen=True, slots=True)
-class Outcome:
-    """Results in the units asked for, by name, with the flags and reasons of the samples."""
-
-    results: Mapping[str, Array]
-    verdict: Verdict
-
-
-@dataclass(frozen=True, slots=True)
-class Answer:
-    """The outcome for each parameterisation, and the one over all of them."""
-
-    question: Question
-    samples: int
-    outcome: Outcome
-    spread: Mapping[str, Array]
-    by_parameterisation: Mapping[str, Outcome]
 
 
 @lru_cache(maxsize=1024)
@@ -109,15 +101,15 @@ def ask(
     Refused
         Naming everything that is wrong, as far as it can be told at once.
     """
+    given = _with_partners(given, optional)
     _check_sides(given)
     names = pick or _main_results(quantity, gas, given, dict(chosen))
     methods = dict(chosen)
     wanted = tuple(_wanted(quantity, gas, name, dict(units), mass_as, methods) for name in names)
-    own = FAMILIES[TRANSFER_FAMILY].given_by
-    if own and (way := next((m for m in SIDES[own].members if m in given), None)):
-        if parameterisations:
-            raise Refused(Fault("two_ways", way, "takes the place of a parameterisation: send one or the other"))
-        methods[TRANSFER_FAMILY] = GIVEN
+    if own := method_by_input(given):
+        if parameterisations and own[0] == GIVEN:
+            raise Refused(Fault("two_ways", own[1], "takes the place of a parameterisation: send one or the other"))
+        methods |= {} if parameterisations else {TRANSFER_FAMILY: own[0]}
     plans: dict[str | None, Plan] = {}
     for name in parameterisations or (None,):
         by_name = methods | ({TRANSFER_FAMILY: name} if name else {})
@@ -129,7 +121,8 @@ def ask(
         )
     first = next(iter(plans.values()))
     asked = methods | ({TRANSFER_FAMILY: ""} if parameterisations else {})
-    _check_inputs(plans.values(), water)
+    _check_inputs(plans.values(), water, gas)
+    _check_spread(plans.values(), given)
     _check_unused(quantity, gas, given, optional, methods, parameterisations)
     if TRANSFER_FAMILY not in asked and water not in (None, "ocean", "coastal") and _uses_transfer(first):
         allowed = ", ".join(methods_for_water(gas, water))
@@ -153,6 +146,16 @@ def _uses_transfer(steps: Plan) -> bool:
 def _family_name(record: Step) -> str | None:
     family = FAMILY_OF.get(record.results[0])
     return family.name if family else None
+
+
+def _with_partners(given: frozenset[str], optional: frozenset[str]) -> frozenset[str]:
+    """Return what was given, without columns that lack what they are used with; refuse others that lack it."""
+    alone = {
+        name for name in given if (beside := TERMS[name].used_with) and not any(partner in given for partner in beside)
+    }
+    if alone - optional:
+        raise Refused(*(_unused(name, given) for name in sorted(alone - optional)))
+    return given - alone
 
 
 def _check_sides(given: frozenset[str]) -> None:
@@ -197,12 +200,14 @@ def _wanted(
     return Wanted(name, term.per_litre if other_basis and term.per_litre else name, change, standard)
 
 
-def _check_inputs(plans: Iterable[Plan], water: str | None) -> None:
+def _check_inputs(plans: Iterable[Plan], water: str | None, gas: Gas) -> None:
     faults: dict[str, Fault] = {}
     for each in plans:
         for term in each.missing:
-            side = SIDES.get(side_of(term) or "")
-            if side:
+            side, family = SIDES.get(side_of(term) or ""), FAMILY_OF.get(term)
+            if family and (method := each.methods.get(family.name)):
+                faults[term] = _not_by_method(term, family.option, method, methods_giving(term, gas))
+            elif side:
                 faults[side.name] = Fault(
                     "missing_input",
                     side.name,
@@ -224,6 +229,24 @@ def _check_inputs(plans: Iterable[Plan], water: str | None) -> None:
         raise Refused(*faults.values())
 
 
+def _not_by_method(term: str, option: str, method: str, others: Iterable[str]) -> Fault:
+    if ways := ways_of(term, method):
+        allowed = ", ".join(ways)
+        return Fault("missing_input", ways[0], f"{option} {method} needs at least one of {allowed}", allowed)
+    allowed = ", ".join(others)
+    told = f"is not given by {option} {method}: {TERMS[term].meaning}; choose one of {allowed or 'another'}"
+    return Fault("missing_input", term, told, allowed)
+
+
+def _check_spread(plans: Iterable[Plan], given: frozenset[str]) -> None:
+    """Refuse the spread of the wind beside a method that holds it in itself already."""
+    spread = sorted(given & set(SIDES["wind_spread"].members))
+    method = next((r.method for each in plans for r in each.records if r.wind_averaging == LONG_TERM), None)
+    if spread and method:
+        told = f"cannot stand beside {method}, which holds the spread of long-term winds in itself: leave it out"
+        raise Refused(Fault("unused", spread[0], told))
+
+
 def _check_unused(
     quantity: Quantity,
     gas: Gas,
@@ -238,21 +261,29 @@ def _check_unused(
         for result in (*quantity.results, *quantity.more):
             known |= set(plan((result,), given, tuple(sorted(by_name.items())), gas.name).leaves)
     if unused := sorted(given - known - optional):
-        raise Refused(
-            *(Fault("unused", name, "is not used by the methods chosen here: leave it out") for name in unused)
-        )
+        raise Refused(*(_unused(name, given) for name in unused))
+
+
+def _unused(name: str, given: frozenset[str]) -> Fault:
+    beside = TERMS[name].used_with
+    if beside and given.isdisjoint(beside):
+        ways = " or ".join(beside)
+        return Fault("unused", name, f"is used only beside {ways}: send that too, or leave {name} out", ways)
+    return Fault("unused", name, "is not used by the methods chosen here: leave it out")
 
 
 def _with_remarks(steps: Plan, name: str | None, water: str | None, asked: Mapping[str, str]) -> Plan:
     """Return the plan with what must be said of the kind of water."""
-    method = name or steps.methods.get(TRANSFER_FAMILY)
-    if not _uses_transfer(steps) or not method or method == GIVEN:
-        return steps
-    record, remarks = transfer_methods()[method], list(steps.remarks)
-    if water and record.water and water not in record.water:
+    method, remarks = name or steps.methods.get(TRANSFER_FAMILY), list(steps.remarks)
+    record = transfer_methods().get(method or "") if _uses_transfer(steps) else None
+    if record and water and record.water and water not in record.water:
         told = f"{method} was made for {', '.join(record.water)}, not for water {water}"
         remarks.append((Remark(told, (), lambda: np.array([True])), ()))
-    if TRANSFER_FAMILY not in asked and water is None and "salinity" in steps.leaves:
+    if water not in INLAND and "air_pressure" in steps.leaves:
+        low, high = SEA_LEVEL_PRESSURE
+        told = f"air_pressure is outside all that was ever measured at sea level, {low:g} to {high:g} hPa"
+        remarks.append((Remark(told, ("air_pressure",), lambda P: (low > P) | (high < P)), ("air_pressure",)))
+    if record and TRANSFER_FAMILY not in asked and water is None and "salinity" in steps.leaves:
         told = f"salinity under {FRESH_FOR_THE_SEA:g} with a method made for the sea: say which water this is"
         remarks.append((Remark(told, ("salinity",), lambda S: S < FRESH_FOR_THE_SEA), ("salinity",)))
     return replace(steps, remarks=tuple(remarks))
@@ -276,7 +307,8 @@ def _methods(plans: Iterable[Plan]) -> dict[str, list[dict[str, Any]]]:
     told: dict[str, list[dict[str, Any]]] = {}
     for each in plans:
         for record in each.records:
-            if record.source is None and record.method != GIVEN:
+            own = record.method and ways_of(record.results[0], record.method)
+            if record.source is None and not own:
                 continue
             source = record.source
             entry = {
@@ -288,91 +320,6 @@ def _methods(plans: Iterable[Plan]) -> dict[str, list[dict[str, Any]]]:
             if entry not in of:
                 of.append(entry)
     return told
-
-
-def answer(
-    question: Question, values: Mapping[str, Array], samples: int, unreadable: Mapping[int, str] | None = None
-) -> Answer:
-    """Compute the answer to a question.
-
-    Parameters
-    ----------
-    question : Question
-        From `ask`.
-    values : mapping of str to (1,) or (samples,) array
-        The inputs that the question uses, in the unit of their term; NaN where missing.
-    samples : int
-        How many samples there are.
-    unreadable : mapping of int to str, optional
-        Samples that could not be read, with the reason.
-
-    Returns
-    -------
-    Answer
-    """
-    inputs = {name: values[name] for name in values if name in question.used}
-    verdict = judge(inputs, samples)
-    for row, reason in (unreadable or {}).items():
-        verdict.reasons[row] = []  # what could not be read is not missing
-        verdict.flags[row] = BAD
-        verdict.mark([row], BAD, reason)
-    outcomes = {name: _outcome(question, steps, inputs, verdict) for name, steps in question.plans.items()}
-    if len(outcomes) == 1:
-        return Answer(question, samples, next(iter(outcomes.values())), {}, {})
-    named = {str(name): outcome for name, outcome in outcomes.items()}
-    outcome, spread = _over(question, named)
-    return Answer(question, samples, outcome, spread, named)
-
-
-def _outcome(question: Question, steps: Plan, inputs: Mapping[str, Array], judged: Verdict) -> Outcome:
-    known = run(steps, inputs)
-    verdict = Verdict(judged.flags.copy(), {row: list(told) for row, told in judged.reasons.items()})
-    judge_results(verdict, steps, known)
-    lost = verdict.lost
-    any_lost = bool(lost.any())
-    results = {}
-    for each in question.wanted:
-        array = each.conversion.from_base(known[steps.keys[each.term]])
-        if array.size != lost.size:
-            array = np.repeat(array, lost.size)
-        results[each.name] = np.where(lost, np.nan, array) if any_lost else array
-    return Outcome(results, verdict)
-
-
-def _over(question: Question, outcomes: Mapping[str, Outcome]) -> tuple[Outcome, dict[str, Array]]:
-    """Return mean and sample standard deviation over the methods that give a number."""
-    results, spread = {}, {}
-    for each in question.wanted:
-        stack = np.stack([outcome.results[each.name] for outcome in outcomes.values()])
-        numbers = np.isfinite(stack)
-        count = numbers.sum(axis=0)
-        with np.errstate(all="ignore"):
-            mean = np.where(numbers, stack, 0.0).sum(axis=0) / count
-            squares = np.where(numbers, (stack - mean) ** 2, 0.0).sum(axis=0)
-            spread[each.name] = np.where(count > 1, np.sqrt(squares / (count - 1)), np.nan)
-        results[each.name] = np.where(count > 0, mean, np.nan)
-    return Outcome(results, _verdict_over(outcomes)), spread
-
-
-def _verdict_over(outcomes: Mapping[str, Outcome]) -> Verdict:
-    """Return the worst flag among the methods that give a number, or among all where none does."""
-    flags = np.stack([outcome.verdict.flags for outcome in outcomes.values()])
-    lost = flags >= BAD
-    worst = np.where(lost.all(axis=0), flags.max(axis=0), np.where(lost, 0, flags).max(axis=0))
-    some_lost = lost.any(axis=0) & ~lost.all(axis=0)
-    worst = np.where(some_lost, np.maximum(worst, SUSPECT), worst).astype(np.int8)
-    return Verdict(worst, dict(_reasons_over(outcomes)))
-
-
-def _reasons_over(outcomes: Mapping[str, Outcome]) -> Iterator[tuple[int, list[str]]]:
-    rows = sorted({row for outcome in outcomes.values() for row in outcome.verdict.reasons})
-    for row in rows:
-        told: dict[str, list[str]] = {}
-        for name, outcome in outcomes.items():
-            for reason in outcome.verdict.reasons.get(row, []):
-                told.setdefault(reason, []).append(name)
-        every = len(outcomes)
-        yield row, [text if len(by) == every else f"{', '.join(by)}: {text}" for text, by in told.items()]
 
 
 def known_names(quantity: Quantity) -> tuple[str, ...]:

@@ -6,71 +6,52 @@ from service.physics.declare import Array, derived, same_as, step
 # Air: mole fraction -> partial pressure -> fugacity; each way of giving the side enters at its own place.
 same_as("fugacity_in_air", "air_fugacity", way="air_fugacity")
 same_as("partial_pressure_in_air", "air_partial_pressure", way="air_partial_pressure")
+same_as("dry_mole_fraction_in_air", "air_mole_fraction", way="air_mole_fraction")
+derived("vapour_pressure_at_interface", of="water_vapour_pressure", water_temperature="skin_temperature")
+derived("fugacity_coefficient_at_interface", of="fugacity_coefficient", water_temperature="skin_temperature")
+derived("vapour_pressure_at_mast", of="water_vapour_pressure", water_temperature="air_temperature", salinity="no_salt")
 
 
-@step("partial_pressure_in_air", way="air_mole_fraction", formula="p = x (P - p_w)")
-def partial_pressure_in_air(air_mole_fraction: Array, surface_pressure: Array, water_vapour_pressure: Array) -> Array:
+@step("dry_mole_fraction_in_air", way="air_mole_fraction_wet", formula="x = x_wet / (1 - RH p_w(T_a)/P)")
+def dry_mole_fraction_in_air(
+    air_mole_fraction_wet: Array,
+    relative_humidity: Array,
+    vapour_pressure_at_mast: Array,
+    surface_pressure: Array,
+) -> Array:
+    """Return the mole fraction in dry air from one read without drying.
+
+    Parameters
+    ----------
+    air_mole_fraction_wet : (...) array
+        As read. [umol mol-1]
+    relative_humidity : (...) array
+        Where it was read. [%]
+    vapour_pressure_at_mast : (...) array
+        Over pure water at the temperature of that air. [hPa]
+    surface_pressure : (...) array
+        Total. [hPa]
+
+    Returns
+    -------
+    (...) array
+        [umol mol-1]
+    """
+    return air_mole_fraction_wet / (1.0 - relative_humidity / 100.0 * vapour_pressure_at_mast / surface_pressure)
+
+
+def partial_pressure_in_air(
+    dry_mole_fraction_in_air: Array, surface_pressure: Array, vapour_pressure_at_interface: Array
+) -> Array:
     """Return the partial pressure at the interface, where the air is saturated with vapour.
 
     Parameters
     ----------
-    air_mole_fraction : (...) array
-        In dry air. [umol mol-1]
+    dry_mole_fraction_in_air : (...) array
+        [umol mol-1]
     surface_pressure : (...) array
         Total. [hPa]
-    water_vapour_pressure : (...) array
-        At the interface. [hPa]
-
-    Returns
-    -------
-    (...) array
-        [uatm]
-    """
-    return air_mole_fraction * ((surface_pressure - water_vapour_pressure) / STANDARD_ATMOSPHERE)
-
-
-@step("fugacity_in_air", formula="f = p phi")
-def fugacity_in_air(partial_pressure_in_air: Array, fugacity_coefficient: Array) -> Array:
-    """Return the fugacity in the air at the interface.
-
-    Parameters
-    ----------
-    partial_pressure_in_air : (...) array
-        [uatm]
-    fugacity_coefficient : (...) array
-        [1]
-
-    Returns
-    -------
-    (...) array
-        [uatm]
-    """
-    return partial_pressure_in_air * fugacity_coefficient
-
-
-# Water: the same, and by concentration.
-same_as("fugacity_in_water", "water_fugacity", way="water_fugacity")
-same_as("partial_pressure_in_water", "water_partial_pressure", way="water_partial_pressure")
-derived(
-    "fugacity_coefficient_in_water",
-    of="fugacity_coefficient",
-    partial_pressure_in_air="partial_pressure_in_water",
-)
-
-
-@step("partial_pressure_in_water", way="water_mole_fraction", formula="p = x (P - p_w)")
-def partial_pressure_in_water(
-    water_mole_fraction: Array, surface_pressure: Array, water_vapour_pressure: Array
-) -> Array:
-    """Return the partial pressure in the water from dried air in equilibrium with it, in situ.
-
-    Parameters
-    ----------
-    water_mole_fraction : (...) array
-        In the dried air. [umol mol-1]
-    surface_pressure : (...) array
-        At which it was in equilibrium. [hPa]
-    water_vapour_pressure : (...) array
+    vapour_pressure_at_interface : (...) array
         [hPa]
 
     Returns
@@ -78,11 +59,68 @@ def partial_pressure_in_water(
     (...) array
         [uatm]
     """
-    return partial_pressure_in_air(water_mole_fraction, surface_pressure, water_vapour_pressure)
+    return dry_mole_fraction_in_air * ((surface_pressure - vapour_pressure_at_interface) / STANDARD_ATMOSPHERE)
 
 
-def _fugacity_in_water(partial_pressure_in_water: Array, fugacity_coefficient_in_water: Array) -> Array:
-    """Return the fugacity in the water.
+for _way in ("air_mole_fraction", "air_mole_fraction_wet"):
+    step("partial_pressure_in_air", way=_way, formula="p = x (P - p_w)")(partial_pressure_in_air)
+
+
+derived(
+    "fugacity_coefficient_at_air_fugacity",
+    of="fugacity_coefficient",
+    partial_pressure_in_air="air_fugacity",
+    water_temperature="skin_temperature",
+)
+
+
+@step("partial_pressure_in_air", way="air_fugacity", formula="p = f / phi")
+def partial_pressure_from_fugacity(air_fugacity: Array, fugacity_coefficient_at_air_fugacity: Array) -> Array:
+    """Return the partial pressure at the interface from the fugacity there, for what bubbles carry down.
+
+    Parameters
+    ----------
+    air_fugacity : (...) array
+        [uatm]
+    fugacity_coefficient_at_air_fugacity : (...) array
+        Taken where the partial pressure equals the fugacity; the error is of the second order. [1]
+
+    Returns
+    -------
+    (...) array
+        [uatm]
+    """
+    return air_fugacity / fugacity_coefficient_at_air_fugacity
+
+
+@step("fugacity_in_air", formula="f = p phi")
+def fugacity_in_air(partial_pressure_in_air: Array, fugacity_coefficient_at_interface: Array) -> Array:
+    """Return the fugacity in the air at the interface.
+
+    Parameters
+    ----------
+    partial_pressure_in_air : (...) array
+        [uatm]
+    fugacity_coefficient_at_interface : (...) array
+        [1]
+
+    Returns
+    -------
+    (...) array
+        [uatm]
+    """
+    return partial_pressure_in_air * fugacity_coefficient_at_interface
+
+
+# Water: the same, and by concentration or saturation; always at water_temperature, whatever the interface has.
+same_as("fugacity_in_water", "water_fugacity", way="water_fugacity")
+same_as("partial_pressure_in_water", "water_partial_pressure", way="water_partial_pressure")
+derived("fugacity_coefficient_in_water", of="fugacity_coefficient", partial_pressure_in_air="partial_pressure_in_water")
+
+
+@step("fugacity_in_water", way="water_partial_pressure", formula="f = p phi", in_situ=True)
+def fugacity_in_water(partial_pressure_in_water: Array, fugacity_coefficient_in_water: Array) -> Array:
+    """Return the fugacity in the water from the partial pressure there.
 
     Parameters
     ----------
@@ -99,11 +137,7 @@ def _fugacity_in_water(partial_pressure_in_water: Array, fugacity_coefficient_in
     return partial_pressure_in_water * fugacity_coefficient_in_water
 
 
-for _way in ("water_mole_fraction", "water_partial_pressure"):
-    step("fugacity_in_water", way=_way, formula="f = p phi")(_fugacity_in_water)
-
-
-@step("fugacity_in_water", way="water_concentration", formula="f = C / K0")
+@step("fugacity_in_water", way="water_concentration", formula="f = C / K0", in_situ=True)
 def fugacity_from_concentration(water_concentration: Array, solubility: Array) -> Array:
     """Return the fugacity in the water from the concentration per kilogram.
 
@@ -122,7 +156,7 @@ def fugacity_from_concentration(water_concentration: Array, solubility: Array) -
     return water_concentration / solubility
 
 
-@step("fugacity_in_water", way="water_concentration_per_litre", formula="f = C / K0")
+@step("fugacity_in_water", way="water_concentration_per_litre", formula="f = C / K0", in_situ=True)
 def fugacity_from_concentration_per_litre(water_concentration_per_litre: Array, solubility_per_litre: Array) -> Array:
     """Return the fugacity in the water from the concentration per litre.
 
@@ -183,20 +217,44 @@ def concentration_in_water_per_litre(solubility_per_litre: Array, fugacity_in_wa
     return solubility_per_litre * fugacity_in_water
 
 
+derived("fugacity_in_air_of_saturation", of="fugacity_in_air", surface_pressure="saturation_pressure")
+derived("fugacity_in_air_of_bulk", of="fugacity_in_air", skin_temperature="subskin_temperature")
+same_as("saturation_pressure", "surface_pressure")
+
+
+@step("fugacity_in_water", way="water_saturation", formula="f = saturation / 100 f_air(P_sat)", in_situ=True)
+def fugacity_from_saturation(water_saturation: Array, fugacity_in_air_of_saturation: Array) -> Array:
+    """Return the fugacity in the water from its percentage of air equilibrium.
+
+    Parameters
+    ----------
+    water_saturation : (...) array
+        [%]
+    fugacity_in_air_of_saturation : (...) array
+        In the air at the pressure to which the percentage refers. [uatm]
+
+    Returns
+    -------
+    (...) array
+        [uatm]
+    """
+    return water_saturation / 100.0 * fugacity_in_air_of_saturation
+
+
 @step("saturation", formula="100 f_water / f_air")
-def saturation(fugacity_in_water: Array, fugacity_in_air: Array) -> Array:
+def saturation(fugacity_in_water: Array, fugacity_in_air_of_bulk: Array) -> Array:
     """Return the saturation at the surface pressure and the temperature of the water.
 
     Parameters
     ----------
     fugacity_in_water : (...) array
         [uatm]
-    fugacity_in_air : (...) array
-        [uatm]
+    fugacity_in_air_of_bulk : (...) array
+        In air in equilibrium with water below the skin. [uatm]
 
     Returns
     -------
     (...) array
         [%]
     """
-    return 100.0 * fugacity_in_water / fugacity_in_air
+    return 100.0 * fugacity_in_water / fugacity_in_air_of_bulk

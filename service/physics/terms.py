@@ -22,8 +22,12 @@ input_term(
     scale=10.0,
     example=35.1,
 )
-input_term("latitude", "degree", "latitude, north positive", possible=(-86.0, 90.0), example=-41.5)
-input_term("longitude", "degree", "longitude, east positive", possible=(-180.0, 360.0), example=176.2)
+input_term(
+    "latitude", "degree", "latitude, north positive", possible=(-86.0, 90.0), example=-41.5, used_with=("longitude",)
+)
+input_term(
+    "longitude", "degree", "longitude, east positive", possible=(-180.0, 360.0), example=176.2, used_with=("latitude",)
+)
 input_term(
     "air_pressure",
     "hPa",
@@ -42,6 +46,7 @@ input_term(
     default=0.0,
     scale=10.0,
     example=12.0,
+    used_with=("air_pressure",),
 )
 input_term(
     "elevation",
@@ -68,6 +73,7 @@ input_term(
     default=10.0,
     scale=10.0,
     example=18.0,
+    used_with=("wind_speed",),
 )
 input_term(
     "air_mole_fraction",
@@ -164,6 +170,10 @@ input_term(
     "exponent n in k proportional to Sc^-n, for the caller's own transfer velocity",
     possible=(0.0, 1.0),
     default=0.5,
+    used_with=(
+        *("given_transfer_velocity_600", "given_transfer_velocity_660"),
+        *(f"own_coefficient_{power}" for power in range(4)),
+    ),
 )
 input_term(
     "mixed_layer_depth",
@@ -195,6 +205,7 @@ term(
 )
 
 term("molar_mass", "g mol-1", "molar mass of the gas")
+term("decay_constant", "s-1", "part of the gas that decays in a unit of time", constant=0.0)
 
 # Water and air.
 term("density", "kg m-3", "density of the water at the surface", standard_name="sea_water_density")
@@ -257,6 +268,9 @@ term("saturation", "%", "concentration in percent of the one in equilibrium with
 
 # Transfer.
 term("schmidt_number", "1", "kinematic viscosity of the water over diffusivity of the gas")
+term("kinematic_viscosity", "m2 s-1", "dynamic viscosity of the water over its density")
+term("diffusivity", "m2 s-1", "molecular diffusivity of the gas in this water")
+term("diffusivity_in_fresh_water", "m2 s-1", "molecular diffusivity of the gas in fresh water of this temperature")
 term("schmidt_number_600", "1", "that of co2 in fresh water at 20 degC, by convention", constant=600.0)
 term("schmidt_number_660", "1", "that of co2 in sea water at 20 degC, by convention", constant=660.0)
 term("wind_speed_10m", "m s-1", "neutral wind speed at 10 m", standard_name="wind_speed")
@@ -265,6 +279,7 @@ term("wind_speed_10m_third_moment", "m3 s-3", "mean cube of the neutral wind spe
 term("friction_velocity_air", "m s-1", "friction velocity in the air")
 term("transfer_velocity_at_reference", "cm h-1", "transfer velocity at the method's reference Schmidt number")
 term("reference_schmidt_number", "1", "the Schmidt number for which a method states its transfer velocity")
+term("transfer_velocity_without_rain", "cm h-1", "transfer velocity of this gas in this water, but for rain")
 term("transfer_velocity", "cm h-1", "gas transfer (piston) velocity of this gas in this water, of open water")
 term("transfer_velocity_600", "cm h-1", "the method's transfer velocity at a Schmidt number of 600")
 term("transfer_velocity_660", "cm h-1", "the method's transfer velocity at a Schmidt number of 660")
@@ -276,7 +291,7 @@ term("open_water_fraction", "1", "fraction of the surface free of ice")
 term(
     "bubble_injection",
     "mmol m-2 d-1",
-    "flux into open water from bubbles that dissolve whole",
+    "flux into open water from bubbles, whatever the concentration there",
     constant=0.0,
     of_gas=True,
 )
@@ -292,15 +307,17 @@ side(
     "water_side",
     (
         "water_mole_fraction",
+        "water_mole_fraction_wet",
         "water_partial_pressure",
         "water_fugacity",
         "water_concentration",
+        "water_saturation",
     ),
     "what is known of the gas in the water",
 )
 side(
     "air_side",
-    ("air_mole_fraction", "air_partial_pressure", "air_fugacity"),
+    ("air_mole_fraction", "air_mole_fraction_wet", "air_partial_pressure", "air_fugacity"),
     "what is known of the gas in the air",
 )
 side("pressure", ("air_pressure", "elevation"), "what is known of the pressure")
@@ -313,6 +330,12 @@ side(
 family("solubility", "solubility_method", "solubility of the gas", ("solubility", "solubility_per_litre"))
 family("fugacity", "fugacity_method", "non-ideality of the gas in air", ("fugacity_coefficient",), "none")
 family("schmidt_number", "schmidt_method", "Schmidt number of the gas", ("schmidt_number",))
+family(
+    "diffusivity_in_fresh_water",
+    "diffusivity_method",
+    "diffusivity of the gas in fresh water",
+    ("diffusivity_in_fresh_water",),
+)
 family(
     "wind_profile",
     "wind_profile",
@@ -329,7 +352,9 @@ family(
         "transfer_velocity_at_reference",
         "reference_schmidt_number",
         "schmidt_exponent",
+        "transfer_velocity_without_rain",
         "transfer_velocity",
+        "bubble_injection_per_atmosphere",
         "bubble_injection",
     ),
     default="wanninkhof-2014",

@@ -104,37 +104,4 @@ def smith_1988_friction_velocity(wind_speed_10m: Array) -> Array:
 
 
 same_as("wind_speed_10m", "wind_speed", method="smith-1988", assumes=("wind_height",))
-
-
-@step("wind_speed_10m_second_moment", formula="<U^2> = U^2, without a variance")
-def second_moment(wind_speed_10m: Array) -> Array:
-    """Return the mean square of a steady wind.
-
-    Parameters
-    ----------
-    wind_speed_10m : (...) array
-        [m s-1]
-
-    Returns
-    -------
-    (...) array
-        [m2 s-2]
-    """
-    return wind_speed_10m**2
-
-
-@step("wind_speed_10m_third_moment", formula="<U^3> = U^3, without a variance")
-def third_moment(wind_speed_10m: Array) -> Array:
-    """Return the mean cube of a steady wind.
-
-    Parameters
-    ----------
-    wind_speed_10m : (...) array
-        [m s-1]
-
-    Returns
-    -------
-    (...) array
-        [m3 s-3]
-    """
-    return wind_speed_10m**3
+same_as("friction_velocity_air", "friction_velocity", method="smith-1988", way="friction_velocity")

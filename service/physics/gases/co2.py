@@ -1,7 +1,8 @@
 """Carbon dioxide."""
 
 from service.physics.declare import Block, Gas, gas
-from service.physics.schmidt_number.polynomials import Rows
+from service.physics.schmidt_number.diffusivity import Arrhenius, MolarVolume
+from service.physics.schmidt_number.polynomials import FRESH_ONLY, Rows
 from service.physics.solubility.forms import Weiss
 from service.physics.solubility.fugacity import Virial
 
@@ -10,11 +11,18 @@ CO2 = gas(
         name="co2",
         formula="CO2",
         title="carbon dioxide",
-        molar_mass=44.0095,
+        molar_mass=44.009,
         element="C",
         element_mass=12.011,
         inert=False,
-        defaults={"solubility": "weiss-1974", "fugacity": "weiss-1974", "schmidt_number": "wanninkhof-2014"},
+        constants={"reacts_with_water": 1.0},
+        defaults={
+            "solubility": "weiss-1974",
+            "fugacity": "weiss-1974",
+            "temperature_correction": "by-salinity",
+            "schmidt_number": "wanninkhof-2014",
+            "diffusivity_in_fresh_water": "jahne-1987",
+        },
         standard_names={
             "flux upward": "surface_upward_mole_flux_of_carbon_dioxide",
             "flux downward": "surface_downward_mole_flux_of_carbon_dioxide",
@@ -41,6 +49,9 @@ CO2 = gas(
                 Virial(B=(-1636.75, 12.0408, -3.27957e-2, 3.16528e-5), delta=(57.7, -0.118)),
                 printed_in="Eqs. 6 and 11",
             ),
+            Block("temperature_factor", "takahashi-1993", 0.0423, printed_in="abstract"),
+            Block("temperature_factor", "by-salinity", 0.0423, printed_in="abstract"),
+            Block("temperature_factor", "takahashi-2009", (0.0433, -4.35e-5), printed_in="Eq. 1"),
             Block(
                 "schmidt_number",
                 "wanninkhof-2014",
@@ -55,6 +66,37 @@ CO2 = gas(
                 "wanninkhof-1992",
                 Rows(sea=(2073.1, -125.62, 3.6276, -0.043219), fresh=(1911.1, -118.11, 3.4527, -0.041320)),
                 printed_in="Table A1; from memory, confirmed in part by viscosity over diffusivity",
+            ),
+            Block(
+                "schmidt_number",
+                "raymond-2012",
+                Rows(sea=None, fresh=(1742, -91.24, 2.208, -0.0219)),
+                printed_in="Table 1; from memory",
+                valid=FRESH_ONLY,
+            ),
+            Block(
+                "diffusivity_in_fresh_water",
+                "jahne-1987",
+                Arrhenius(A=5019e-5, activation_energy=19.51),
+                printed_in="Table 4; from memory",
+            ),
+            Block(
+                "diffusivity_in_fresh_water",
+                "wilke-chang-1955",
+                MolarVolume(at_boiling_point=34.0),
+                printed_in="molar volume: tabled by Poling et al. (2001); from memory",
+            ),
+            Block(
+                "diffusivity_in_fresh_water",
+                "hayduk-laudie-1974",
+                MolarVolume(at_boiling_point=34.0),
+                printed_in="molar volume: tabled by Poling et al. (2001); from memory",
+            ),
+            Block(
+                "steady_state_supersaturation",
+                "woolf-thorpe-1991",
+                49.0,
+                printed_in="wind speed of one percent, m s-1; from memory",
             ),
         ),
     )

@@ -1,7 +1,8 @@
 """Nitrous oxide."""
 
 from service.physics.declare import Block, Gas, gas
-from service.physics.schmidt_number.polynomials import Rows
+from service.physics.schmidt_number.diffusivity import MolarVolume
+from service.physics.schmidt_number.polynomials import FRESH_ONLY, Rows
 from service.physics.solubility.forms import Weiss
 from service.physics.solubility.fugacity import Virial
 
@@ -17,6 +18,7 @@ N2O = gas(
             "solubility": "weiss-price-1980",
             "fugacity": "weiss-price-1980",
             "schmidt_number": "wanninkhof-2014",
+            "diffusivity_in_fresh_water": "wilke-chang-1955",
         },
         constants={"storage_ratio": 1.0},
         dry_air="about 0.34e-6, rising: give it",
@@ -54,6 +56,25 @@ N2O = gas(
                 "wanninkhof-1992",
                 Rows(sea=(2301.1, -151.1, 4.7364, -0.059431), fresh=(2055.6, -137.11, 4.3173, -0.054350)),
                 printed_in="Table A1; from memory, confirmed in part by viscosity over diffusivity",
+            ),
+            Block(
+                "schmidt_number",
+                "raymond-2012",
+                Rows(sea=None, fresh=(2105, -130.08, 3.486, -0.0365)),
+                printed_in="Table 1; from memory",
+                valid=FRESH_ONLY,
+            ),
+            Block(
+                "diffusivity_in_fresh_water",
+                "wilke-chang-1955",
+                MolarVolume(at_boiling_point=35.8),
+                printed_in="molar volume: liquid at the boiling point by the reference equation of state of the fluid",
+            ),
+            Block(
+                "diffusivity_in_fresh_water",
+                "hayduk-laudie-1974",
+                MolarVolume(at_boiling_point=35.8),
+                printed_in="molar volume: liquid at the boiling point by the reference equation of state of the fluid",
             ),
         ),
     )

@@ -1,8 +1,11 @@
 """Oxygen."""
 
 from service.physics.declare import Block, Gas, gas
-from service.physics.schmidt_number.polynomials import Rows
-from service.physics.solubility.forms import ScaledTemperature
+from service.physics.schmidt_number.diffusivity import MolarVolume
+from service.physics.schmidt_number.polynomials import FRESH_ONLY, SEA_ONLY, Rows
+from service.physics.solubility.forms import MoistAir, ScaledTemperature
+
+OXYGEN_MOLAR_VOLUME = 22.3916  # L mol-1 at 0 degC and 1 atm; Garcia and Gordon (1992)
 
 O2 = gas(
     Gas(
@@ -10,8 +13,12 @@ O2 = gas(
         formula="O2",
         title="oxygen",
         molar_mass=31.998,
-        defaults={"solubility": "garcia-gordon-1992", "schmidt_number": "wanninkhof-2014"},
-        constants={"storage_ratio": 1.0, "molar_volume_stp": 22.3916},
+        defaults={
+            "solubility": "garcia-gordon-1992",
+            "schmidt_number": "wanninkhof-2014",
+            "diffusivity_in_fresh_water": "wilke-chang-1955",
+        },
+        constants={"storage_ratio": 1.0, "molar_volume_stp": OXYGEN_MOLAR_VOLUME},
         standard_names={
             "flux downward": "surface_downward_mole_flux_of_molecular_oxygen",
             "concentration_in_water_per_litre": "mole_concentration_of_dissolved_molecular_oxygen_in_sea_water",
@@ -27,6 +34,7 @@ O2 = gas(
                     B=(-7.01577e-3, -7.70028e-3, -1.13864e-2, -9.51519e-3),
                     C0=-2.75915e-7,
                     mole_fraction=0.20946,
+                    moles=1e-6,
                 ),
                 printed_in="Table 1, Benson and Krause, umol kg-1",
                 supplies={"air_mole_fraction": 0.20946e6},
@@ -39,6 +47,7 @@ O2 = gas(
                     B=(-6.24523e-3, -7.37614e-3, -1.03410e-2, -8.17083e-3),
                     C0=-4.88682e-7,
                     mole_fraction=0.20946,
+                    moles=1e-3 / OXYGEN_MOLAR_VOLUME,
                 ),
                 printed_in="Table 1, Benson and Krause, mL L-1",
                 supplies={"air_mole_fraction": 0.20946e6},
@@ -51,6 +60,7 @@ O2 = gas(
                     B=(-7.01211e-3, -7.25958e-3, -7.93334e-3, -5.54491e-3),
                     C0=-1.32412e-7,
                     mole_fraction=0.20946,
+                    moles=1e-6,
                 ),
                 printed_in="Table 1, combined fit, umol kg-1",
                 supplies={"air_mole_fraction": 0.20946e6},
@@ -69,6 +79,57 @@ O2 = gas(
                 "wanninkhof-1992",
                 Rows(sea=(1953.4, -128.00, 3.9918, -0.050091), fresh=(1800.6, -120.10, 3.7818, -0.047608)),
                 printed_in="Table A1; from memory, confirmed in part by viscosity over diffusivity",
+            ),
+            Block(
+                "solubility_per_litre",
+                "weiss-1970",
+                MoistAir(
+                    A1=-173.4292,
+                    A2=249.6339,
+                    A3=143.3483,
+                    A4=-21.8492,
+                    B1=-0.033096,
+                    B2=0.014259,
+                    B3=-0.0017000,
+                    mole_fraction=0.20946,
+                    moles=1e-3 / OXYGEN_MOLAR_VOLUME,
+                ),
+                printed_in="the equation for moist air, mL L-1",
+                supplies={"air_mole_fraction": 0.20946e6},
+                note="mole fraction of Glueckauf (1951); mL of the real gas",
+            ),
+            Block(
+                "schmidt_number",
+                "keeling-1998",
+                Rows(sea=(1638, -81.83, 1.483, -0.008004), fresh=None),
+                printed_in="the cubic for sea water; from memory",
+                valid=SEA_ONLY,
+                note="no fresh-water row: not offered below salinity 35",
+            ),
+            Block(
+                "schmidt_number",
+                "raymond-2012",
+                Rows(sea=None, fresh=(1568, -86.04, 2.142, -0.0216)),
+                printed_in="Table 1; from memory",
+                valid=FRESH_ONLY,
+            ),
+            Block(
+                "diffusivity_in_fresh_water",
+                "wilke-chang-1955",
+                MolarVolume(at_boiling_point=28.0),
+                printed_in="molar volume: liquid at the boiling point by the reference equation of state of the fluid",
+            ),
+            Block(
+                "diffusivity_in_fresh_water",
+                "hayduk-laudie-1974",
+                MolarVolume(at_boiling_point=28.0),
+                printed_in="molar volume: liquid at the boiling point by the reference equation of state of the fluid",
+            ),
+            Block(
+                "steady_state_supersaturation",
+                "woolf-thorpe-1991",
+                9.0,
+                printed_in="wind speed of one percent, m s-1; from memory",
             ),
         ),
     )

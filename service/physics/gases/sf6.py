@@ -1,7 +1,8 @@
 """Sulphur hexafluoride."""
 
 from service.physics.declare import Block, Gas, gas
-from service.physics.schmidt_number.polynomials import Rows
+from service.physics.schmidt_number.diffusivity import Arrhenius, MolarVolume
+from service.physics.schmidt_number.polynomials import FRESH_ONLY, SEA_ONLY, Rows
 from service.physics.solubility.forms import Weiss
 
 SF6 = gas(
@@ -9,10 +10,14 @@ SF6 = gas(
         name="sf6",
         formula="SF6",
         title="sulphur hexafluoride",
-        molar_mass=146.055,
+        molar_mass=146.050,
         element="S",
         element_mass=32.06,
-        defaults={"solubility": "bullister-2002", "schmidt_number": "wanninkhof-2014"},
+        defaults={
+            "solubility": "bullister-2002",
+            "schmidt_number": "wanninkhof-2014",
+            "diffusivity_in_fresh_water": "king-saltzman-1995",
+        },
         constants={"storage_ratio": 1.0},
         standard_names={"flux downward": "surface_downward_mole_flux_of_sulfur_hexafluoride"},
         dry_air="about 11e-12, rising: give it",
@@ -45,6 +50,39 @@ SF6 = gas(
                 "wanninkhof-1992",
                 Rows(sea=(3531.6, -231.40, 7.2168, -0.090558), fresh=(3255.3, -217.13, 6.8370, -0.086070)),
                 printed_in="Table A1; from memory, confirmed in part by viscosity over diffusivity",
+            ),
+            Block(
+                "schmidt_number",
+                "king-saltzman-1995",
+                Rows(sea=(3016.1, -172.00, 4.4996, -0.047965), fresh=None),
+                printed_in="the cubic for sea water; from memory",
+                valid=SEA_ONLY,
+                note="no fresh-water row: not offered below salinity 35",
+            ),
+            Block(
+                "schmidt_number",
+                "raymond-2012",
+                Rows(sea=None, fresh=(3255, -217.13, 6.837, -0.0861)),
+                printed_in="Table 1; from memory",
+                valid=FRESH_ONLY,
+            ),
+            Block(
+                "diffusivity_in_fresh_water",
+                "king-saltzman-1995",
+                Arrhenius(A=0.029, activation_energy=19.3),
+                printed_in="the fit for pure water; from memory",
+            ),
+            Block(
+                "diffusivity_in_fresh_water",
+                "wilke-chang-1955",
+                MolarVolume(at_boiling_point=77.8),
+                printed_in="molar volume: sum of Le Bas's atomic volumes as tabled there; from memory",
+            ),
+            Block(
+                "diffusivity_in_fresh_water",
+                "hayduk-laudie-1974",
+                MolarVolume(at_boiling_point=77.8),
+                printed_in="molar volume: sum of Le Bas's atomic volumes as tabled there; from memory",
             ),
         ),
     )

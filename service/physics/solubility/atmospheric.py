@@ -10,21 +10,17 @@ from service.physics.solubility.forms import (
     ScaledTemperature,
     from_moist_air,
     kelvin_1968,
-    moist_air,
     scaled_temperature,
+    solubility_from_moist_air,
 )
 from service.physics.solubility.marine import BOTH_FORMS
 
-MICRO = 1e-6  # the printed fits give micromoles
-NANO = 1e-9  # the printed fits give nanomoles
-OXYGEN_MOLAR_VOLUME = 22.3916  # L mol-1 at 0 degC and 1 atm; Garcia and Gordon (1992)
-
 
 def _garcia_gordon(coefficients: ScaledTemperature, water_temperature: Array, salinity: Array) -> Array:
-    """Return K0 from a Garcia-Gordon fit, per the amount its coefficients give."""
+    """Return K0 from a Garcia-Gordon fit, per kilogram or litre as its coefficients are."""
     celsius_1968 = kelvin_1968(water_temperature) - ZERO_CELSIUS
     concentration = scaled_temperature(coefficients, celsius_1968, salinity)
-    return from_moist_air(concentration, coefficients.mole_fraction, water_temperature, salinity)
+    return from_moist_air(concentration, coefficients.mole_fraction, water_temperature, salinity) * coefficients.moles
 
 
 GARCIA_GORDON: dict[str, Any] = {
@@ -67,7 +63,7 @@ def garcia_gordon_1992(coefficients: ScaledTemperature, water_temperature: Array
     ----------
     Garcia and Gordon (1992), Eq. 8 and Table 1. doi:10.4319/lo.1992.37.6.1307
     """
-    return _garcia_gordon(coefficients, water_temperature, salinity) * MICRO
+    return _garcia_gordon(coefficients, water_temperature, salinity)
 
 
 @step(
@@ -101,7 +97,7 @@ def garcia_gordon_1992_per_litre(coefficients: ScaledTemperature, water_temperat
     ----------
     Garcia and Gordon (1992), Eq. 8 and Table 1. doi:10.4319/lo.1992.37.6.1307
     """
-    return _garcia_gordon(coefficients, water_temperature, salinity) / (OXYGEN_MOLAR_VOLUME * 1000.0)
+    return _garcia_gordon(coefficients, water_temperature, salinity)
 
 
 @step(
@@ -153,7 +149,7 @@ def hamme_emerson_2004(coefficients: ScaledTemperature, water_temperature: Array
     Parameters
     ----------
     coefficients : ScaledTemperature
-        For umol kg-1; neon's, printed for nmol kg-1, bring that factor in their first coefficient.
+        For umol kg-1; for nmol kg-1 those of neon.
     water_temperature : (...) array
         ITS-90. [degC]
     salinity : (...) array
@@ -173,7 +169,45 @@ def hamme_emerson_2004(coefficients: ScaledTemperature, water_temperature: Array
     Hamme and Emerson (2004), Eq. 1 and Table 4. doi:10.1016/j.dsr.2004.06.009
     """
     concentration = scaled_temperature(coefficients, water_temperature, salinity)
-    return from_moist_air(concentration, coefficients.mole_fraction, water_temperature, salinity) * MICRO
+    return from_moist_air(concentration, coefficients.mole_fraction, water_temperature, salinity) * coefficients.moles
+
+
+@step(
+    "solubility_per_litre",
+    method="weiss-1970",
+    source=sources.WEISS_1970,
+    equation="the equation for moist air",
+    formula="ln C = A1 + A2 (100/T) + A3 ln(T/100) + A4 (T/100) + S (B1 + B2 (T/100) + B3 (T/100)^2); "
+    "K0 = C / (x (1 - p_w))",
+    valid={"water_temperature": (-2.0, 40.0), "salinity": (0.0, 40.0)},
+    note="range from memory",
+)
+def weiss_1970(coefficients: MoistAir, water_temperature: Array, salinity: Array) -> Array:
+    """Return the solubility of oxygen, nitrogen or argon after Weiss (1970).
+
+    Parameters
+    ----------
+    coefficients : MoistAir
+        For mL L-1 of the real gas at 0 degC and 1 atm.
+    water_temperature : (...) array
+        ITS-90, converted to IPTS-68, for which the authors' IPTS-48 is taken. [degC]
+    salinity : (...) array
+        Practical salinity. [1]
+
+    Returns
+    -------
+    (...) array
+        K0. [mol L-1 atm-1]
+
+    Notes
+    -----
+    Between IPTS-48 and IPTS-68 there are at most 0.01 K from 0 to 40 degC, 2e-4 of the solubility. NaN in, NaN out.
+
+    References
+    ----------
+    Weiss (1970). doi:10.1016/0011-7471(70)90037-9
+    """
+    return solubility_from_moist_air(coefficients, kelvin_1968(water_temperature), water_temperature, salinity)
 
 
 @step(
@@ -186,12 +220,12 @@ def hamme_emerson_2004(coefficients: ScaledTemperature, water_temperature: Array
     valid={"water_temperature": (-2.0, 30.0), "salinity": (0.0, 40.0)},
 )
 def wiesenburg_guinasso_1979(coefficients: MoistAir, water_temperature: Array, salinity: Array) -> Array:
-    """Return the solubility of methane after Wiesenburg and Guinasso (1979).
+    """Return the solubility of methane, carbon monoxide or hydrogen after Wiesenburg and Guinasso (1979).
 
     Parameters
     ----------
     coefficients : MoistAir
-        For nmol kg-1 or nmol L-1.
+        For nmol kg-1, nmol L-1 or nL L-1, per mole fraction.
     water_temperature : (...) array
         ITS-90, converted to IPTS-68. [degC]
     salinity : (...) array
@@ -204,11 +238,11 @@ def wiesenburg_guinasso_1979(coefficients: MoistAir, water_temperature: Array, s
 
     Notes
     -----
-    The printed equation is linear in the dry mole fraction, which therefore cancels. NaN in, NaN out.
+    The printed equation is linear in the dry mole fraction, which therefore cancels. The authors' nL are those of an
+    ideal gas: for methane their nL and nmol sets differ by 22.414 nL nmol-1. NaN in, NaN out.
 
     References
     ----------
     Wiesenburg and Guinasso (1979), Eq. 7 and Table VI. doi:10.1021/je60083a006
     """
-    concentration = moist_air(coefficients, kelvin_1968(water_temperature), salinity)
-    return from_moist_air(concentration, 1.0, water_temperature, salinity) * NANO
+    return solubility_from_moist_air(coefficients, kelvin_1968(water_temperature), water_temperature, salinity)

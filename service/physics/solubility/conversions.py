@@ -118,12 +118,12 @@ def henry_constant_per_litre(solubility_per_litre: Array) -> Array:
 
 
 @step("equilibrium_concentration", formula="K0 f_air")
-def equilibrium_concentration(solubility: Array, fugacity_in_air: Array) -> Array:
+def equilibrium_concentration(solubility_at_skin: Array, fugacity_in_air: Array) -> Array:
     """Return the concentration in equilibrium with the air, per kilogram.
 
     Parameters
     ----------
-    solubility : (...) array
+    solubility_at_skin : (...) array
         At the interface. [mol kg-1 atm-1]
     fugacity_in_air : (...) array
         [uatm]
@@ -133,16 +133,16 @@ def equilibrium_concentration(solubility: Array, fugacity_in_air: Array) -> Arra
     (...) array
         [umol kg-1]
     """
-    return solubility * fugacity_in_air
+    return solubility_at_skin * fugacity_in_air
 
 
 @step("equilibrium_concentration_per_litre", formula="K0 (per litre) f_air")
-def equilibrium_concentration_per_litre(solubility_per_litre: Array, fugacity_in_air: Array) -> Array:
+def equilibrium_concentration_per_litre(solubility_per_litre_at_skin: Array, fugacity_in_air: Array) -> Array:
     """Return the concentration in equilibrium with the air, per litre.
 
     Parameters
     ----------
-    solubility_per_litre : (...) array
+    solubility_per_litre_at_skin : (...) array
         At the interface. [mol L-1 atm-1]
     fugacity_in_air : (...) array
         [uatm]
@@ -152,4 +152,4 @@ def equilibrium_concentration_per_litre(solubility_per_litre: Array, fugacity_in
     (...) array
         [umol L-1]
     """
-    return solubility_per_litre * fugacity_in_air
+    return solubility_per_litre_at_skin * fugacity_in_air

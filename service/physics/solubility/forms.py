@@ -21,7 +21,11 @@ class Weiss(NamedTuple):
 
 
 class MoistAir(NamedTuple):
-    """ln C = A1 + A2 (100/T) + A3 ln(T/100) + A4 (T/100) + S (B1 + B2 (T/100) + B3 (T/100)^2), per mole fraction."""
+    """ln C = A1 + A2 (100/T) + A3 ln(T/100) + A4 (T/100) + S (B1 + B2 (T/100) + B3 (T/100)^2) + C1 S^2.
+
+    `mole_fraction` is the one in dry air for which C is printed, None where the fit is per mole fraction; `moles` turns
+    the printed amount into moles.
+    """
 
     A1: float
     A2: float
@@ -30,15 +34,37 @@ class MoistAir(NamedTuple):
     B1: float
     B2: float
     B3: float
+    moles: float
+    mole_fraction: float | None = None
+    C1: float = 0.0
 
 
 class ScaledTemperature(NamedTuple):
-    """ln C = sum A_i Ts^i + S sum B_i Ts^i + C0 S^2, Ts = ln((298.15 - t)/(273.15 + t)), at a dry mole fraction."""
+    """ln C = sum A_i Ts^i + S sum B_i Ts^i + C0 S^2, Ts = ln((298.15 - t)/(273.15 + t)), at a dry mole fraction.
+
+    `moles` turns the printed amount into moles.
+    """
 
     A: tuple[float, ...]
     B: tuple[float, ...]
     C0: float
     mole_fraction: float
+    moles: float
+
+
+class SolubilityFunction(NamedTuple):
+    """ln F = A1 + A2 (100/T) + A3 ln(T/100) + A4 (T/100)^2 + S (B1 + B2 (T/100) + B3 (T/100)^2), T in kelvin.
+
+    F is the concentration over the dry mole fraction in vapour-saturated air at a total pressure of 1 atm.
+    """
+
+    A1: float
+    A2: float
+    A3: float
+    A4: float
+    B1: float
+    B2: float
+    B3: float
 
 
 class InverseTemperature(NamedTuple):
@@ -71,7 +97,7 @@ def weiss(coefficients: Weiss, kelvin: Array, salinity: Array) -> Array:
 
 
 def moist_air(coefficients: MoistAir, kelvin: Array, salinity: Array) -> Array:
-    """Return the concentration per unit of dry mole fraction, in moist air at 1 atm, in the coefficients' unit.
+    """Return the concentration in equilibrium with moist air at 1 atm, in the coefficients' unit.
 
     Parameters
     ----------
@@ -82,9 +108,53 @@ def moist_air(coefficients: MoistAir, kelvin: Array, salinity: Array) -> Array:
     salinity : (...) array
         Practical salinity. [1]
     """
+    A1, A2, A3, A4, B1, B2, B3, _, _, C1 = coefficients
+    tt = kelvin / 100.0
+    of_salinity = salinity * (B1 + tt * (B2 + B3 * tt) + C1 * salinity)
+    return np.exp(A1 + A2 / tt + A3 * np.log(tt) + A4 * tt + of_salinity)
+
+
+def solubility_from_moist_air(
+    coefficients: MoistAir, kelvin: Array, water_temperature: Array, salinity: Array
+) -> Array:
+    """Return K0 from a fit to concentrations in equilibrium with moist air.
+
+    Parameters
+    ----------
+    coefficients : MoistAir
+        As printed.
+    kelvin : (...) array
+        Temperature on the authors' scale. [K]
+    water_temperature : (...) array
+        The same on ITS-90. [degC]
+    salinity : (...) array
+        Practical salinity. [1]
+
+    Returns
+    -------
+    (...) array
+        [mol kg-1 atm-1 or mol L-1 atm-1]
+    """
+    concentration = moist_air(coefficients, kelvin, salinity)
+    mole_fraction = 1.0 if coefficients.mole_fraction is None else coefficients.mole_fraction
+    return from_moist_air(concentration, mole_fraction, water_temperature, salinity) * coefficients.moles
+
+
+def solubility_function(coefficients: SolubilityFunction, kelvin: Array, salinity: Array) -> Array:
+    """Return F, in the unit of its coefficients.
+
+    Parameters
+    ----------
+    coefficients : SolubilityFunction
+        As printed.
+    kelvin : (...) array
+        Temperature on the authors' scale. [K]
+    salinity : (...) array
+        Practical salinity. [1]
+    """
     A1, A2, A3, A4, B1, B2, B3 = coefficients
     tt = kelvin / 100.0
-    return np.exp(A1 + A2 / tt + A3 * np.log(tt) + A4 * tt + salinity * (B1 + tt * (B2 + B3 * tt)))
+    return np.exp(A1 + A2 / tt + A3 * np.log(tt) + A4 * tt * tt + salinity * (B1 + tt * (B2 + B3 * tt)))
 
 
 def scaled_temperature(coefficients: ScaledTemperature, celsius: Array, salinity: Array) -> Array:

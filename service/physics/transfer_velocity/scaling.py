@@ -1,9 +1,17 @@
 """From a method's reference Schmidt number to that of this gas in this water."""
 
-from service.physics.declare import Array, derived, same_as, step
+import numpy as np
+
+from service.physics.declare import Array, Remark, derived, same_as, step
+
+NEGATIVE = Remark(
+    "the fit gives a negative transfer velocity here, which is set to 0",
+    ("transfer_velocity_at_reference",),
+    lambda k: k < 0.0,
+)
 
 
-@step("transfer_velocity", formula="k = k_ref (Sc/Sc_ref)^-n")
+@step("transfer_velocity_without_rain", formula="k = k_ref (Sc/Sc_ref)^-n")
 def transfer_velocity(
     transfer_velocity_at_reference: Array,
     reference_schmidt_number: Array,
@@ -31,6 +39,52 @@ def transfer_velocity(
     return transfer_velocity_at_reference * (schmidt_number / reference_schmidt_number) ** -schmidt_exponent
 
 
+def never_negative(
+    transfer_velocity_at_reference: Array,
+    reference_schmidt_number: Array,
+    schmidt_exponent: Array,
+    schmidt_number: Array,
+) -> Array:
+    """Return the transfer velocity at a Schmidt number, 0 where a fit falls below that.
+
+    Parameters
+    ----------
+    transfer_velocity_at_reference : (...) array
+        [cm h-1]
+    reference_schmidt_number : (...) array
+        [1]
+    schmidt_exponent : (...) array
+        n, positive. [1]
+    schmidt_number : (...) array
+        [1]
+
+    Returns
+    -------
+    (...) array
+        [cm h-1]
+    """
+    at_reference = np.maximum(transfer_velocity_at_reference, 0.0)
+    return transfer_velocity(at_reference, reference_schmidt_number, schmidt_exponent, schmidt_number)
+
+
+def set_negative_to_zero(*methods: str) -> None:
+    """Declare that methods whose fit can fall below zero give 0 there, and say so."""
+    for method in methods:
+        step(
+            "transfer_velocity_without_rain",
+            method=method,
+            formula="k = max(k_ref, 0) (Sc/Sc_ref)^-n",
+            remarks=(NEGATIVE,),
+        )(never_negative)
+
+
+def takes_no_rain(*methods: str) -> None:
+    """Declare that rain is not added to what methods give."""
+    for method in methods:
+        same_as("transfer_velocity", "transfer_velocity_without_rain", method=method)
+
+
+same_as("transfer_velocity", "transfer_velocity_without_rain")
 derived("transfer_velocity_600", of="transfer_velocity", schmidt_number="schmidt_number_600")
 derived("transfer_velocity_660", of="transfer_velocity", schmidt_number="schmidt_number_660")
 
@@ -43,3 +97,5 @@ for _name, _reference in (
 ):
     same_as("transfer_velocity_at_reference", _name, method="given", way=_name)
     same_as("reference_schmidt_number", _reference, method="given", way=_name, in_situ=True)
+
+takes_no_rain("given")

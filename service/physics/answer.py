@@ -1,0 +1,157 @@
+"""The answer to a question: what the plans give, judged sample by sample, for one method or for several."""
+
+from collections.abc import Callable, Iterator, Mapping
+from dataclasses import dataclass
+
+import numpy as np
+
+from service.physics.declare import Array, Step
+from service.physics.engine import Shared, run
+from service.physics.judge import BAD, SUSPECT, Verdict, judge, judge_results
+from service.physics.plans import Plan
+from service.physics.question import Question
+
+
+@dataclass(frozen=True, slots=True)
+class Told:
+    """One number of the calculation: an input as it was taken, or what a step gave."""
+
+    key: str
+    values: Array
+    how: str
+    step: Step | None
+
+
+@dataclass(frozen=True, slots=True)
+class Outcome:
+    """Results in the units asked for, by name, with the flags and reasons of the samples."""
+
+    results: Mapping[str, Array]
+    verdict: Verdict
+    chain: tuple["Told", ...] = ()
+
+
+@dataclass(frozen=True, slots=True)
+class Answer:
+    """The outcome for each parameterisation, and the one over all of them."""
+
+    question: Question
+    samples: int
+    outcome: Outcome
+    spread: Mapping[str, Array]
+    by_parameterisation: Mapping[str, Outcome]
+
+
+def answer(
+    question: Question,
+    values: Mapping[str, Array],
+    samples: int,
+    unreadable: Mapping[int, str] | None = None,
+    labels: Mapping[str, str] | None = None,
+    with_steps: bool = False,
+) -> Answer:
+    """Compute the answer to a question.
+
+    Parameters
+    ----------
+    question : Question
+        From `ask`.
+    values : mapping of str to (1,) or (samples,) array
+        The inputs that the question uses, in the unit of their term; NaN where missing.
+    samples : int
+        How many samples there are.
+    unreadable : mapping of int to str, optional
+        Samples that could not be read, with the reason.
+    labels : mapping of str to str, optional
+        How the sender knows an input, where not by its own name.
+    with_steps : bool
+        Whether the calculation is told step by step.
+
+    Returns
+    -------
+    Answer
+    """
+    inputs = {name: values[name] for name in values if name in question.used}
+    verdict = judge(inputs, samples, labels or {})
+    for row, reason in (unreadable or {}).items():
+        verdict.reasons[row] = []  # what could not be read is not missing
+        verdict.flags[row] = BAD
+        verdict.mark([row], BAD, reason)
+    shared: Shared = {}
+    outcomes = {
+        name: _outcome(question, steps, inputs, verdict, shared, with_steps) for name, steps in question.plans.items()
+    }
+    if len(outcomes) == 1:
+        return Answer(question, samples, next(iter(outcomes.values())), {}, {})
+    named = {str(name): outcome for name, outcome in outcomes.items()}
+    outcome, spread = _over(question, named)
+    return Answer(question, samples, outcome, spread, named)
+
+
+def _outcome(
+    question: Question,
+    steps: Plan,
+    inputs: Mapping[str, Array],
+    judged: Verdict,
+    shared: Shared,
+    with_steps: bool,
+) -> Outcome:
+    known = run(steps, inputs, shared)
+    verdict = Verdict(judged.flags.copy(), {row: list(told) for row, told in judged.reasons.items()})
+    judge_results(verdict, steps, known)
+    lost = verdict.lost
+    any_lost = bool(lost.any())
+
+    def told(array: Array) -> Array:
+        whole = array if array.size == lost.size else np.repeat(array, lost.size)
+        return np.where(lost, np.nan, whole) if any_lost else whole
+
+    results = {each.name: told(each.conversion.from_base(known[steps.keys[each.term]])) for each in question.wanted}
+    return Outcome(results, verdict, tuple(_chain(steps, known, told)) if with_steps else ())
+
+
+def _chain(steps: Plan, known: Mapping[str, Array], told: Callable[[Array], Array]) -> Iterator[Told]:
+    """Yield the numbers of a calculation in its order: the inputs, what the gas brings, then step by step."""
+    for name in steps.leaves:
+        yield Told(name, told(known[name]), "assumed" if name in steps.defaults else "as sent", None)
+    for name, value in steps.constants.items():
+        yield Told(name, told(value), "constant of the gas or the method", None)
+    for node in steps.nodes:
+        for key in node.results:
+            yield Told(key, told(known[key]), node.step.formula, node.step)
+
+
+def _over(question: Question, outcomes: Mapping[str, Outcome]) -> tuple[Outcome, dict[str, Array]]:
+    """Return mean and sample standard deviation over the methods that give a number."""
+    results, spread = {}, {}
+    for each in question.wanted:
+        stack = np.stack([outcome.results[each.name] for outcome in outcomes.values()])
+        numbers = np.isfinite(stack)
+        count = numbers.sum(axis=0)
+        with np.errstate(all="ignore"):
+            mean = np.where(numbers, stack, 0.0).sum(axis=0) / count
+            squares = np.where(numbers, (stack - mean) ** 2, 0.0).sum(axis=0)
+            spread[each.name] = np.where(count > 1, np.sqrt(squares / (count - 1)), np.nan)
+        results[each.name] = np.where(count > 0, mean, np.nan)
+    return Outcome(results, _verdict_over(outcomes)), spread
+
+
+def _verdict_over(outcomes: Mapping[str, Outcome]) -> Verdict:
+    """Return the worst flag among the methods that give a number, or among all where none does."""
+    flags = np.stack([outcome.verdict.flags for outcome in outcomes.values()])
+    lost = flags >= BAD
+    worst = np.where(lost.all(axis=0), flags.max(axis=0), np.where(lost, 0, flags).max(axis=0))
+    some_lost = lost.any(axis=0) & ~lost.all(axis=0)
+    worst = np.where(some_lost, np.maximum(worst, SUSPECT), worst).astype(np.int8)
+    return Verdict(worst, dict(_reasons_over(outcomes)))
+
+
+def _reasons_over(outcomes: Mapping[str, Outcome]) -> Iterator[tuple[int, list[str]]]:
+    rows = sorted({row for outcome in outcomes.values() for row in outcome.verdict.reasons})
+    for row in rows:
+        told: dict[str, list[str]] = {}
+        for name, outcome in outcomes.items():
+            for reason in outcome.verdict.reasons.get(row, []):
+                told.setdefault(reason, []).append(name)
+        every = len(outcomes)
+        yield row, [text if len(by) == every else f"{', '.join(by)}: {text}" for text, by in told.items()]
