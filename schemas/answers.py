@@ -3,7 +3,7 @@
 from collections.abc import Mapping
 from typing import Any
 
-from schemas.requests import request_fields
+from schemas.vocabulary import request_fields
 from service.physics.declare import FAMILIES, Quantity
 from service.physics.faults import CODES
 from service.physics.judge import BAD, GOOD, MISSING, SUSPECT
@@ -109,7 +109,7 @@ def answer_schema(quantity: Quantity) -> Described:
     }
     properties: Described = {
         "quantity": {"const": quantity.name},
-        "gas": TEXT,
+        **({"gas": TEXT} if quantity.of_gas else {}),
         "samples": {"type": "integer", "minimum": 1},
         **outcome["properties"],
         **(several if option in request_fields(quantity) else {}),

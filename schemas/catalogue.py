@@ -182,7 +182,7 @@ def catalogue_schemas() -> dict[str, Described]:
                 "inputs": TEXTS,
                 "formula": TEXT,
                 "schmidt_number_reference": NUMBER_OR_NONE,
-                "schmidt_exponent": {"type": ["number", "string"]},
+                "schmidt_exponent": {"type": ["number", "string", "null"]},
                 "wind_averaging": TEXT_OR_NONE,
                 "range": schema("Ranges"),
                 "range_kind": TEXT,

@@ -11,8 +11,8 @@ from schemas import answers, catalogue
 from schemas.answers import Described, Statuses, ref, schema
 from schemas.examples import Example, quantity_examples
 from schemas.needs import quantity_needs, quantity_results, quantity_sides
-from schemas.parameters import Sent, own_fields, unit_lists, value_schemas
-from schemas.requests import request_fields
+from schemas.parameters import Sent, own_fields, patterned, unit_lists, value_schemas
+from schemas.vocabulary import request_fields
 from service.physics.declare import QUANTITIES, Quantity
 from service.physics.faults import CODES
 
@@ -88,7 +88,7 @@ def document(version: str, limits: Mapping[str, int], statuses: Statuses) -> dic
         security=ANYONE_OR_TOKEN,
         tags=[{"name": name, "description": text} for name, text in TAGS.items()],
         plugins=[plugin],
-        **{"x-limits": dict(limits), "x-codes": CODES, "x-unit-lists": unit_lists()},
+        **{"x-limits": dict(limits), "x-codes": CODES, "x-unit-lists": unit_lists(), "x-patterns": patterned()},
     )
     if plugin.converter is None:
         raise LookupError("apispec brings no converter of fields")
@@ -142,6 +142,7 @@ def _quantity(spec: APISpec, quantity: Quantity, converter: OpenAPIConverter) ->
     body = {
         "type": "object",
         "properties": {name: _member(spec, name, member) for name, member in sent.members().items()},
+        "patternProperties": patterned(),
         "additionalProperties": False,
     }
     spec.components.schema(f"Request.{quantity.name}", body)

@@ -8,6 +8,7 @@ from urllib.parse import quote, urlencode
 
 from schemas.needs import enough, two_parameterisations, usual_gases
 from schemas.parameters import number_text
+from schemas.vocabulary import request_fields
 from service.physics.declare import TERMS, Gas, Quantity, Term
 
 # What an example sends beyond what its quantity needs, because people usually have it.
@@ -61,7 +62,7 @@ def quantity_examples(quantity: Quantity) -> list[Example]:
 
 def _examples(quantity: Quantity, gas: Gas, inputs: list[Term]) -> Iterable[Example]:
     address = f"/v1/{quantity.name}"
-    named = [("gas", gas.name)]
+    named = [("gas", gas.name)] if "gas" in request_fields(quantity) else []
     one = named + [(term.name, number_text(_first(term))) for term in inputs]
     several = named + [
         (term.name, ";".join(number_text(value) for value in _both(term)) + _unit(term)) for term in inputs
@@ -82,15 +83,14 @@ def _examples(quantity: Quantity, gas: Gas, inputs: list[Term]) -> Iterable[Exam
     if methods := two_parameterisations(quantity, gas, [term.name for term in inputs]):
         both = ";".join(methods)
         yield get("get-methods", "by two methods, with mean and spread", [*one, ("parameterisation", both)])
-    yield post(
-        "json", "one sample", "application/json", {"gas": gas.name, **{term.name: _first(term) for term in inputs}}
-    )
+    document = {**dict(named), **{term.name: _first(term) for term in inputs}}
+    yield post("json", "one sample", "application/json", document)
     yield post(
         "json-several",
         "two samples, one of them with its unit",
         "application/json",
         {
-            "gas": gas.name,
+            **dict(named),
             **{term.name: list(_both(term)) for term in inputs[:-1]},
             **{term.name: {"values": list(_both(term)), "unit": term.unit} for term in inputs[-1:]},
         },

@@ -2,9 +2,10 @@
 
 from collections.abc import Iterable, Iterator
 from dataclasses import dataclass
+from functools import lru_cache
 from typing import Any
 
-from schemas.requests import family_choices, quantity_families, quantity_inputs
+from schemas.vocabulary import family_choices, quantity_families, quantity_inputs
 from service.physics.declare import FAMILIES, GASES, SIDES, TERMS, Family, Gas, Quantity, Side
 from service.physics.engine import plan
 from service.physics.methods import GIVEN, TRANSFER_FAMILY, default_method, methods_for_water, side_of
@@ -44,9 +45,15 @@ def plan_for(
     return plan(wanted, frozenset(given), tuple(sorted(chosen)), gas.name)
 
 
+@lru_cache(maxsize=64)
+def offered(family: Family) -> dict[str, list[str]]:
+    """Return the methods of a family for each gas, those gases first that are most often asked for."""
+    return {gas.name: family_choices(family, gas) for gas in usual_gases()}
+
+
 def usual_gases() -> list[Gas]:
     """Return the gases, those most often asked for first."""
-    return sorted(GASES.values(), key=lambda gas: gas.name not in FIRST_GASES)
+    return [GASES[name] for name in dict.fromkeys((*FIRST_GASES, *GASES)) if name in GASES]
 
 
 def _ways(quantity: Quantity) -> Iterator[Way]:
@@ -54,11 +61,9 @@ def _ways(quantity: Quantity) -> Iterator[Way]:
     for gas in GASES.values():
         yield Way(plan_for(quantity, gas))
     for family in quantity_families(quantity):
-        offered = {gas.name: family_choices(family, gas) for gas in usual_gases()}
-        first = {method: name for name in reversed(offered) for method in offered[name]}
-        for method in family_choices(family):
-            plan_ = plan_for(quantity, GASES[first[method]], chosen=[(family.name, method)])
-            yield Way(plan_, family.option, method)
+        for method, gases in gases_by_choice(family).items():
+            by_method = plan_for(quantity, GASES[gases[0]], chosen=[(family.name, method)])
+            yield Way(by_method, family.option, method)
         for member in SIDES[family.given_by].members if family.given_by else ():
             yield Way(plan_for(quantity, usual_gases()[0], [member], [(family.name, GIVEN)]))
 
@@ -111,7 +116,7 @@ def _by_option(ways: Iterable[Way]) -> dict[str, list[str]]:
     for way in ways:
         if way.option and way.method:
             found.setdefault(way.option, []).append(way.method)
-    every = {family.option: len(family_choices(family)) for family in FAMILIES.values() if family.option in found}
+    every = {family.option: len(gases_by_choice(family)) for family in FAMILIES.values() if family.option in found}
     own = FAMILIES[TRANSFER_FAMILY].option
     return {option: names for option, names in found.items() if len(names) < every[option]} or {
         option: names for option, names in found.items() if option == own
@@ -206,10 +211,13 @@ def two_parameterisations(quantity: Quantity, gas: Gas, inputs: Iterable[str]) -
     return fit[:2] if len(fit) > 1 else []
 
 
-def choices_by_gas(family: Family) -> dict[str, list[str]]:
-    """Return the methods of a family for each gas; empty where every gas has the same."""
-    found = {gas.name: family_choices(family, gas) for gas in GASES.values()}
-    return found if len({tuple(names) for names in found.values()}) > 1 else {}
+def gases_by_choice(family: Family) -> dict[str, list[str]]:
+    """Return the methods of a family with the gases that each can answer for."""
+    found: dict[str, list[str]] = {}
+    for gas, methods in offered(family).items():
+        for method in methods:
+            found.setdefault(method, []).append(gas)
+    return found
 
 
 def defaults_by_gas(family: Family) -> dict[str, str | None]:

@@ -1,5 +1,6 @@
 """What may be sent, in the words of the API document: each input and option, in a query and in JSON."""
 
+import re
 from collections.abc import Iterable, Iterator, Mapping
 from typing import Any
 
@@ -7,12 +8,12 @@ import numpy as np
 from apispec.ext.marshmallow.openapi import OpenAPIConverter
 from marshmallow import fields
 
-from schemas.needs import choices_by_gas, defaults_by_gas
-from schemas.requests import SAMPLES_LIMIT, Choice, Line, Words, quantity_families
+from schemas.needs import defaults_by_gas, gases_by_choice
+from schemas.options import Choice, Line, OptionNumber, Words
+from schemas.requests import CORRELATION, SAMPLES_LIMIT
 from schemas.samples import MISSING_MARKS, NUMBER, Measured
-from service.physics.catalogue import own_inputs
+from schemas.vocabulary import UNCERTAIN, quantity_families
 from service.physics.declare import GASES, QUANTITIES, SIDES, TERMS, Family, Quantity, Term
-from service.physics.methods import transfer_methods
 from service.physics.question import known_names
 from service.physics.units import allowed
 
@@ -111,7 +112,7 @@ def units_of(term: Term) -> list[str]:
 
 def unit_list(term: Term) -> str:
     """Return the name of the list of units that a term has in common with others."""
-    if term.name == "salinity":
+    if term.name.removeprefix(UNCERTAIN) == "salinity":
         return "practical salinity"
     return f"{term.unit} of a gas" if term.of_gas else term.unit
 
@@ -123,27 +124,54 @@ def unit_lists() -> dict[str, list[str]]:
     return {unit_list(term): units_of(term) for term in terms}
 
 
+def _bare(term: Term) -> Described:
+    return {"x-unit": term.unit, "x-possible": limits_of(term)}
+
+
 def term_facts(term: Term) -> Described:
     """Return what a page needs to know of an input, beyond how its value is written."""
     facts: Described = {"x-units": unit_list(term), "x-holds": term.holds}
+    if term.name not in TERMS:
+        facts["x-uncertainty-of"] = term.name.removeprefix(UNCERTAIN)
     if term.above_lower_limit:
         facts["x-above-lower-limit"] = True
     if term.no_default_for_water:
         facts["x-no-default-for-water"] = list(term.no_default_for_water)
     if side := next((side.name for side in SIDES.values() if term.name in side.members), None):
         facts["x-side"] = side
-    if methods := [name for name in transfer_methods() if term.name in own_inputs(name)]:
-        facts["x-needed-by"] = methods
     if term.standard_name:
         facts["x-standard-name"] = term.standard_name
     return facts
 
 
+def _term_of(field: Measured) -> Term:
+    """Return the term that a field is told as: an uncertainty has the unit of its input and nothing else of it."""
+    if field.term.name in TERMS:
+        return field.term
+    return Term(
+        field.term.name,
+        field.term.unit,
+        field.metadata.get("description", ""),
+        is_input=True,
+        possible=(0.0, np.inf),
+        holds=field.term.holds,
+        of_gas=field.term.of_gas,
+    )
+
+
 def _family_facts(family: Family) -> Described:
-    facts: Described = {"x-default-by-gas": defaults_by_gas(family)}
-    if by_gas := choices_by_gas(family):
-        facts["x-choices-by-gas"] = by_gas
-    return facts
+    """Return which method each gas uses by default, and for which gases the others are, where not for all."""
+    gases = gases_by_choice(family)
+    some = {choice: names for choice, names in gases.items() if len(names) < len(GASES)}
+    return {"x-default-by-gas": defaults_by_gas(family), **({"x-gases-by-choice": some} if some else {})}
+
+
+def patterned() -> dict[str, Described]:
+    """Return what is sent under names that are made of other names: a pattern for them to what may stand there."""
+    number = {"type": "number", "minimum": -1, "maximum": 1}
+    text = {"type": "string", "pattern": rf"^\s*(?:{NUMBER.pattern})\s*$"}
+    description = f"`{CORRELATION}a.b`: correlation of two inputs whose standard uncertainties are sent"
+    return {rf"^{re.escape(CORRELATION)}\w+\.\w+$": {"description": description, "anyOf": [number, text]}}
 
 
 def own_fields(_: OpenAPIConverter, field: fields.Field[Any], **__: Any) -> Described:
@@ -156,6 +184,10 @@ def own_fields(_: OpenAPIConverter, field: fields.Field[Any], **__: Any) -> Desc
     if isinstance(field, Words):
         word, fewest = {"type": "string"}, 0 if field.may_be_empty else 1
         return {"anyOf": [word, {"type": "array", "items": word, "uniqueItems": True, "minItems": fewest}]}
+    if isinstance(field, OptionNumber):
+        kind = "integer" if field.whole else "number"
+        number = {"type": kind, "minimum": field.low, "maximum": field.high}
+        return {"anyOf": [number, {"type": "string", "pattern": rf"^\s*(?:{NUMBER.pattern})\s*$"}]}
     return {"type": "string"} if isinstance(field, Line) else {}
 
 
@@ -178,9 +210,8 @@ class Sent:
         for name, field in self.fields.items():
             member = self.converter.field2property(field)
             if isinstance(field, Measured):
-                member |= self._bare(field.term)
-                if field.term.default is not None:
-                    member["default"] = field.term.default
+                term = _term_of(field)
+                member |= _bare(term) | ({} if term.default is None else {"default": term.default})
             if isinstance(field, Choice) and (default := self._first(name, field)) is not None:
                 member["default"] = default
             found[name] = member
@@ -198,11 +229,12 @@ class Sent:
         about: Described = {"description": field.metadata.get("description", "")}
         schema: Described
         if isinstance(field, Measured):
+            term = _term_of(field)
             schema = {"$ref": "#/components/schemas/ValueText"}
-            if field.term.default is not None:
-                schema["default"] = number_text(field.term.default)
-            if field.term.example is not None:
-                about["example"] = number_text(field.term.example)
+            if term.default is not None:
+                schema["default"] = number_text(term.default)
+            if term.example is not None:
+                about["example"] = number_text(term.example)
         elif isinstance(field, Choice):
             schema = {"type": "string", "enum": list(field.choices)}
             if (default := self._first(name, field)) is not None:
@@ -215,7 +247,7 @@ class Sent:
 
     def _facts(self, name: str, field: fields.Field[Any]) -> Described:
         if isinstance(field, Measured):
-            return self._bare(field.term) | term_facts(field.term)
+            return _bare(_term_of(field)) | term_facts(_term_of(field))
         facts = _family_facts(self.families[name]) if name in self.families else {}
         if isinstance(field, Words):
             choices = list(field.metadata.get("choices", ()))
@@ -228,10 +260,6 @@ class Sent:
 
     def _first(self, name: str, field: Choice) -> str | None:
         return None if name in NO_DEFAULT or name in self.families else field.choices[0]
-
-    @staticmethod
-    def _bare(term: Term) -> Described:
-        return {"x-unit": term.unit, "x-possible": limits_of(term)}
 
     def _units(self) -> Iterator[tuple[str, Described, Described]]:
         """Yield each result with the schema of its unit and what is said of it."""

@@ -1,7 +1,7 @@
 """The numbers of a request: one value, a list or a column, with its unit, read as an array in one conversion."""
 
 import re
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Any
 
 import numpy as np
@@ -59,9 +59,9 @@ def shown(value: object) -> str:
 class Measured(fields.Field[Reading]):
     """A number, a list of numbers, text with a unit, or a CSV column."""
 
-    def __init__(self, term: Term, **more: Any) -> None:
+    def __init__(self, term: Term, prefix: str = "", **more: Any) -> None:
         super().__init__(**more)
-        self.term = term
+        self.term = replace(term, name=prefix + term.name) if prefix else term
 
     def _deserialize(self, value: Any, attr: str | None, data: Any, **kwargs: Any) -> Reading:
         if isinstance(value, Column):

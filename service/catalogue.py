@@ -1,7 +1,7 @@
 """The addresses that tell what there is: gases, methods, sources, units, limits, and whether the service is well."""
 
 import hashlib
-from collections.abc import Callable, Iterable
+from collections.abc import Callable, Collection, Iterable
 from functools import cache
 from typing import Any
 
@@ -9,13 +9,14 @@ import orjson
 from flask import Flask, Response, request
 
 from schemas.document import document
-from schemas.requests import SAMPLES_LIMIT, quantity_inputs
+from schemas.requests import SAMPLES_LIMIT
 from schemas.samples import NUMBER
+from schemas.vocabulary import quantity_inputs
 from service.config import Config, service_version
 from service.errors import TYPES
 from service.physics import catalogue
 from service.physics.declare import GASES, QUANTITIES
-from service.physics.faults import Fault, Refused, unknown
+from service.physics.faults import Fault, Refused, nearest, unknown
 from service.physics.methods import transfer_methods
 from service.physics.quantities import TRANSFER_VELOCITY
 from service.physics.terms import WATERS
@@ -52,16 +53,14 @@ def parameters(known: Iterable[str]) -> dict[str, str]:
     return found
 
 
-def one_of(name: str, value: str | None, choices: Iterable[str]) -> str | None:
+def one_of(name: str, value: str | None, choices: Collection[str]) -> str | None:
     """Return a value of a closed list, or None where there is none, refusing others."""
     if value is not None and value not in choices:
+        near = nearest(value[:100], choices)
+        hint = f": did you mean {near}?" if near else ""
+        listed = ", ".join(choices)
         raise Refused(
-            Fault(
-                "unknown_option",
-                name,
-                f"{value[:100]!r} is not one of {', '.join(choices)}",
-                ", ".join(choices),
-            )
+            Fault("unknown_option", name, f"{value[:100]!r} is not known here{hint or f': {listed}'}", listed)
         )
     return value
 

@@ -1,33 +1,13 @@
 """Which columns of a table stand for which inputs."""
 
-from collections.abc import Container, Iterable, Mapping
+from collections.abc import Iterable, Mapping
 from typing import Any
 
-from schemas.requests import not_served
 from schemas.samples import Column
 from service.csv_table import Header
 from service.physics.faults import Fault, Refused
 
 USED_LIMIT = 64
-# Columns that will change numbers once they are read, by an input of the quantities that will read them.
-NOT_READ_YET = {
-    "wind_speed": ("wind_speed_variance", "weibull_shape"),
-    "air_mole_fraction": ("air_mole_fraction_wet",),
-    "water_mole_fraction": (
-        "water_mole_fraction_wet",
-        "equilibrator_temperature",
-        "equilibrator_pressure",
-        "headspace_ratio",
-        "headspace_start_mole_fraction",
-        "water_saturation",
-        "saturation_pressure",
-        "alkalinity",
-        "dissolved_inorganic_carbon",
-        "ph",
-        "subskin_temperature",
-        "skin_temperature",
-    ),
-}
 SHORTEST_FOR_A_SLIP = 5  # letters; shorter names are too near to other words
 
 
@@ -63,10 +43,8 @@ def bind(header: Header, raw: Mapping[str, Any], inputs: Iterable[str]) -> dict[
         if name in ignored or header.raw[index] in ignored:
             continue
         if name not in known:
-            if _would_be_read(name, known):
-                reason = f"is not served yet ({not_served(name, known)}): rename the column, or send ignore={name}"
-                faults.append(Fault("unknown_name", name, reason))
-        elif name not in bound:
+            continue
+        if name not in bound:
             bound[name] = Column(index, header.raw[index], header.units[index])
         elif index not in pointed:
             faults.append(_twice(name, isinstance(bound[name], Column) and name not in raw))
@@ -81,13 +59,6 @@ def bind(header: Header, raw: Mapping[str, Any], inputs: Iterable[str]) -> dict[
     if sum(isinstance(value, Column) for value in bound.values()) > USED_LIMIT:
         raise Refused(Fault("too_large", "csv", "uses too many columns", f"{USED_LIMIT} columns"))
     return bound
-
-
-def _would_be_read(name: str, known: Container[str]) -> bool:
-    """Tell whether a column belongs to a part of the vocabulary that changes numbers but does not answer yet."""
-    if name.startswith("u_"):
-        return name[2:] in known
-    return any(beside in known and name in names for beside, names in NOT_READ_YET.items())
 
 
 def _twice(name: str, as_columns: bool) -> Fault:

@@ -9,7 +9,10 @@ from flask import Request as HttpRequest
 from flask import Response
 from numpy.typing import NDArray
 
-from schemas.requests import SAMPLES_LIMIT, Input, Request, load, quantity_inputs
+from schemas.checked import Input, Request
+from schemas.doubts import asked_of
+from schemas.requests import SAMPLES_LIMIT, load
+from schemas.vocabulary import UNCERTAIN, quantity_inputs
 from service import writers
 from service.columns import bind
 from service.config import Config
@@ -19,6 +22,7 @@ from service.errors import LISTED, BadSamples
 from service.physics.answer import Answer, answer
 from service.physics.declare import TERMS, Array, Quantity
 from service.physics.faults import Fault, Refused
+from service.physics.sureness import Asked
 from service.readers import Sent, read, refused_table
 
 FORMS = ("json", "csv", "number")
@@ -35,12 +39,15 @@ def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Respons
     if sent.table is None:
         values = {each.term: each.values for each in checked.inputs if each.values is not None}
         with_steps = checked.options.get("detail") == "steps"
-        answered = _strictly(answer(checked.question, values, checked.samples, with_steps=with_steps), checked)
-        response = _written(answered, checked, form)
+        asked = asked_of(checked, {}, checked.samples)
+        answered = _strictly(
+            answer(checked.question, values, checked.samples, with_steps=with_steps, asked=asked), checked
+        )
+        response = _written(answered, checked, form, asked)
     elif form == "csv":
         response = _csv_behind(sent, checked, request)
     else:
-        response = _written(_whole_table(sent, checked), checked, form)
+        response = _written(_whole_table(sent, checked), checked, form, _Columns(sent, checked).asked)
     if checked.options.get("detail") != "brief":
         assumed, methods = writers.header_text(checked.question)
         response.headers["Catspaw-Assumed"] = assumed
@@ -50,7 +57,8 @@ def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Respons
 
 def _column_names(quantity: Quantity) -> list[str]:
     """Return the inputs that a column may hold; what stands once for the request is never read from one."""
-    return [name for name in quantity_inputs(quantity) if TERMS[name].holds != "request"]
+    names = [name for name in quantity_inputs(quantity) if TERMS[name].holds != "request"]
+    return [*names, *(UNCERTAIN + name for name in names)]
 
 
 def _without_columns(raw: dict[str, Any]) -> dict[str, Any]:
@@ -106,12 +114,12 @@ def _refuse_lost(parts: Iterable[tuple[Answer, NDArray[Any] | None]]) -> None:
         raise BadSamples(faults, bad, samples)
 
 
-def _written(answered: Answer, checked: Request, form: str) -> Response:
+def _written(answered: Answer, checked: Request, form: str, asked: Asked | None) -> Response:
     options = checked.options
     if form == "json":
-        return Response(writers.json_bytes(answered, options.get("detail", "full")), mimetype=JSON_TYPE)
+        return Response(writers.json_bytes(answered, options.get("detail", "full"), asked), mimetype=JSON_TYPE)
     if form == "csv":
-        return Response(_csv_alone(answered, checked), content_type=CSV_TYPE)
+        return Response(_csv_alone(answered, checked, asked), content_type=CSV_TYPE)
     lines = list(writers.number_lines(answered, options.get("decimal", "point")))
     if len(lines) == 1 and lines[0] == "NaN":
         reasons = "; ".join(answered.outcome.verdict.reasons.get(0, [])) or "no result"
@@ -119,13 +127,13 @@ def _written(answered: Answer, checked: Request, form: str) -> Response:
     return Response("\n".join(lines), content_type=NUMBER_TYPE)
 
 
-def _csv_alone(answered: Answer, checked: Request) -> bytes:
+def _csv_alone(answered: Answer, checked: Request, asked: Asked | None) -> bytes:
     """Return a table of the inputs as they were understood and the results behind them."""
     options = checked.options
     names = [f"{each.term} [{TERMS[each.term].unit}]" for each in checked.inputs]
     inputs = [np.broadcast_to(each.values, answered.samples) for each in checked.inputs if each.values is not None]
     numbers, texts = writers.csv_columns(answered)
-    header = ",".join([*names, *writers.csv_names(answered.question, options.get("headers", "units"))])
+    header = ",".join([*names, *writers.csv_names(answered.question, options.get("headers", "units"), asked)])
     columns = [*inputs, *numbers]
     missing = options.get("missing", "").encode()
     first = number_cells(columns[0], missing)
@@ -142,6 +150,8 @@ class _Columns:
             each.term: each.values for each in checked.inputs if each.values is not None
         }
         self.columns: list[Input] = [each for each in checked.inputs if each.column is not None and each.term in used]
+        leaves = {leaf for plan in checked.question.plans.values() for leaf in plan.leaves}
+        self.doubts: list[Input] = [each for each in checked.doubts if each.column is not None and each.term in leaves]
         if lists := [name for name, array in self.constants.items() if array.size > 1]:
             raise Refused(
                 *(Fault("length", name, "is a list beside a table: send one value, or a column") for name in lists)
@@ -150,19 +160,32 @@ class _Columns:
         if sent.table is None:
             raise Refused(Fault("table", "csv", "is not there"))
         placed = {each.term: each.column for each in self.columns if each.column is not None}
-        indices = [column.index for column in placed.values()]
+        doubted = [each.column for each in self.doubts if each.column is not None]
+        indices = [column.index for column in (*placed.values(), *doubted)]
         names = {term: sent.table.header.names[column.index] for term, column in placed.items()}
         self.labels = {term: f"{term} (column {name})" for term, name in names.items() if term != name}
+        nothing_yet = {each.term: np.zeros(1) for each in self.doubts}
+        self.rows = sent.table.rows_at_most
+        self.asked = asked_of(checked, nothing_yet, self.rows)
         self.blocks = sent.table.blocks(indices, decimal_comma=checked.options.get("decimal") == "comma")
+
+    def numbers(self, columns: list[Array]) -> tuple[dict[str, Array], dict[str, Array]]:
+        """Return the inputs and the uncertainties that columns hold, in the unit of their term."""
+        values, doubts = dict(self.constants), {}
+        for each, column in zip(self.columns, columns, strict=False):
+            values[each.term] = each.conversion.to_base(column)
+        for each, column in zip(self.doubts, columns[len(self.columns) :], strict=True):
+            doubts[each.term] = each.conversion.scale(column)
+        return values, doubts
 
     def answers(self) -> Iterator[tuple[Block, Answer]]:
         """Yield each block with its answer."""
         try:
             for block in self.blocks:
-                values = dict(self.constants)
-                for each, column in zip(self.columns, block.columns, strict=True):
-                    values[each.term] = each.conversion.to_base(column)
-                yield block, answer(self.checked.question, values, len(block.lines), block.bad, self.labels)
+                values, doubts = self.numbers(block.columns)
+                asked = asked_of(self.checked, doubts, self.rows)
+                answered = answer(self.checked.question, values, len(block.lines), block.bad, self.labels, asked=asked)
+                yield block, answered
         except TableError as error:
             raise refused_table(error) from error
 
@@ -172,7 +195,8 @@ def _csv_behind(sent: Sent, checked: Request, request: HttpRequest) -> Response:
     if sent.table is None:
         raise Refused(Fault("table", "csv", "is not there"))
     header, options = sent.table.header, checked.options
-    added = writers.csv_names(checked.question, options.get("headers", "units"))
+    table = _Columns(sent, checked)
+    added = writers.csv_names(checked.question, options.get("headers", "units"), table.asked)
     plain = {name.partition(" [")[0] for name in added}
     plain -= {
         name for name, raw in zip(header.names, header.raw, strict=True) if {name, raw} & {*options.get("ignore", ())}
@@ -180,7 +204,7 @@ def _csv_behind(sent: Sent, checked: Request, request: HttpRequest) -> Response:
     if clash := [name for name in header.names if name in plain]:
         cure = "is also the name of a column to be written: rename it, or send ignore={} to pass it through as it is"
         raise Refused(*(Fault("collision", name, cure.format(name)) for name in clash))
-    answers = _Columns(sent, checked).answers()
+    answers = table.answers()
     first = next(answers, None)
     missing = options.get("missing", "").encode()
 
@@ -208,13 +232,14 @@ def _whole_table(sent: Sent, checked: Request) -> Answer:
     if samples > SAMPLES_LIMIT:
         limit = f"{SAMPLES_LIMIT} samples"
         raise Refused(Fault("too_large", "csv", f"of {samples} rows is over the limit of this form", limit), status=413)
-    values: dict[str, Any] = dict(gathered.constants)
-    for place, each in enumerate(gathered.columns):
-        values[each.term] = each.conversion.to_base(np.concatenate([block.columns[place] for block in blocks]))
+    columns = [np.concatenate(parts) for parts in zip(*(block.columns for block in blocks), strict=True)]
+    values, doubts = gathered.numbers(columns)
+    asked = asked_of(checked, doubts, samples)
     bad: dict[int, str] = {}
     start = 0
     for block in blocks:
         bad |= {start + row: reason for row, reason in block.bad.items()}
         start += len(block.lines)
     numbers = np.concatenate([block.line_numbers for block in blocks])
-    return _strictly(answer(checked.question, values, samples, bad, gathered.labels), checked, numbers)
+    answered = answer(checked.question, values, samples, bad, gathered.labels, asked=asked)
+    return _strictly(answered, checked, numbers)

@@ -124,6 +124,11 @@ class Table:
         self._blank_lines = re.compile(rb"(?:[%b]*+\r?(?:\n|\Z))++" % blanks)
         self._cell = re.compile(rb'("(?:[^"]++|"")*+")?([^\n%b]*+)' % self._delimiter)
 
+    @property
+    def rows_at_most(self) -> int:
+        """Return an upper limit of the data rows."""
+        return self._body.count(b"\n") + 1
+
     def blocks(self, used: Sequence[int], decimal_comma: bool = False, rows: int = 16384) -> Iterator[Block]:
         """Yield the table block by block.
 

@@ -12,6 +12,7 @@ from service.physics.answer import Answer, Outcome
 from service.physics.declare import TERMS, Array
 from service.physics.judge import Verdict
 from service.physics.question import Question, Wanted
+from service.physics.sureness import Asked, Sureness
 
 SERVICE = {"name": "catspaw", "version": service_version()}
 THREE_DECIMALS = re.compile(r"\.(\d{3})(?=$|[eE])")
@@ -24,13 +25,27 @@ def unit_text(wanted: Wanted) -> str:
     return f"{wanted.conversion.unit} as {mass_of}" if mass_of else wanted.conversion.unit
 
 
-def _result(wanted: Wanted, values: Array, spread: Array | None) -> dict[str, Any]:
+def _result(wanted: Wanted, values: Array, spread: Array | None, sure: Sureness | None) -> dict[str, Any]:
     told: dict[str, Any] = {"values": np.ascontiguousarray(values), "unit": wanted.conversion.unit}
     if wanted.conversion.mass_of:
         told["mass_of"] = wanted.conversion.mass_of
     told["standard_name"] = wanted.standard_name
     if spread is not None:
         told["spread"] = np.ascontiguousarray(spread)
+    if sure is not None:
+        told |= _sure(sure, spread)
+    return told
+
+
+def _sure(sure: Sureness, spread: Array | None) -> dict[str, Any]:
+    """Return what is told of a result's uncertainty; with several methods the parts within and between them."""
+    told: dict[str, Any] = {"u": sure.u, "u_inputs": sure.u_inputs}
+    if spread is not None:
+        told["u_total"] = np.sqrt(sure.u**2 + spread**2)
+    if sure.budget:
+        told["budget"] = sure.budget
+    if sure.low is not None:
+        told["interval"] = {"low": sure.low, "high": sure.high}
     return told
 
 
@@ -62,7 +77,8 @@ def _steps(outcome: Outcome) -> list[dict[str, Any]]:
 def _outcome(question: Question, outcome: Outcome, spread: Mapping[str, Array]) -> dict[str, Any]:
     told: dict[str, Any] = {
         "results": {
-            each.name: _result(each, outcome.results[each.name], spread.get(each.name)) for each in question.wanted
+            each.name: _result(each, outcome.results[each.name], spread.get(each.name), outcome.sure.get(each.name))
+            for each in question.wanted
         },
         "quality": _quality(outcome.verdict),
     }
@@ -71,7 +87,7 @@ def _outcome(question: Question, outcome: Outcome, spread: Mapping[str, Array]) 
     return told
 
 
-def json_bytes(answer: Answer, detail: str = "full") -> bytes:
+def json_bytes(answer: Answer, detail: str = "full", asked: Asked | None = None) -> bytes:
     """Return an answer as JSON: arrays always, null where there is no number."""
     question = answer.question
     document: dict[str, Any] = {
@@ -84,6 +100,8 @@ def json_bytes(answer: Answer, detail: str = "full") -> bytes:
         document["by_parameterisation"] = {
             name: _outcome(question, outcome, {}) for name, outcome in answer.by_parameterisation.items()
         }
+    if asked:
+        document["uncertainty"] = uncertainty_told(asked, answer.outcome.unpublished)
     if detail != "brief":
         document["methods"] = question.methods
         document["assumed"] = question.assumed
@@ -91,7 +109,26 @@ def json_bytes(answer: Answer, detail: str = "full") -> bytes:
     return orjson.dumps(document, option=OPTIONS)
 
 
-def csv_names(question: Question, headers: str = "units") -> list[str]:
+def uncertainty_told(asked: Asked, unpublished: tuple[str, ...]) -> dict[str, Any]:
+    """Return how uncertainty was propagated, and what keeps it from being told."""
+    told: dict[str, Any] = {
+        "method": "monte-carlo" if asked.monte_carlo else "first-order",
+        "methods_counted": asked.doubt.methods,
+    }
+    if asked.monte_carlo:
+        told |= {"draws": asked.draws, "seed": asked.seed}
+    if asked.coverage is not None:
+        told["coverage"] = asked.coverage
+    if unpublished:
+        told["unpublished"] = unpublished
+        told["reason"] = (
+            "u is null: these methods publish no uncertainty; u_unpublished supplies one in percent, u_methods=0 "
+            "leaves the methods out, u_inputs holds what comes from the inputs"
+        )
+    return told
+
+
+def csv_names(question: Question, headers: str = "units", asked: Asked | None = None) -> list[str]:
     """Return the headers of the columns that are written, in order, the flag and the reason last."""
     names = []
     several = [name for name in question.plans if name] if len(question.plans) > 1 else []
@@ -99,6 +136,9 @@ def csv_names(question: Question, headers: str = "units") -> list[str]:
         unit = unit_text(each)
         bracket = f" [{unit}]" if headers == "units" else ""
         names.append(each.name + bracket)
+        if asked:
+            names += [f"u_{each.name}{bracket}", f"u_inputs_{each.name}{bracket}"]
+            names += [f"{each.name}_{end}{bracket}" for end in ("low", "high") if asked.coverage is not None]
         if several:
             names.append(f"{each.name}_spread{bracket}")
             names += [f"{each.name}.{name}{bracket}" for name in several]
@@ -110,6 +150,9 @@ def csv_columns(answer: Answer) -> tuple[list[Array], list[Any]]:
     numbers: list[Array] = []
     for each in answer.question.wanted:
         numbers.append(answer.outcome.results[each.name])
+        if sure := answer.outcome.sure.get(each.name):
+            numbers += [sure.u, sure.u_inputs]
+            numbers += [end for end in (sure.low, sure.high) if end is not None]
         if answer.by_parameterisation:
             numbers.append(answer.spread[each.name])
             numbers += [outcome.results[each.name] for outcome in answer.by_parameterisation.values()]

@@ -1,7 +1,7 @@
 """The answer to a question: what the plans give, judged sample by sample, for one method or for several."""
 
 from collections.abc import Callable, Iterator, Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 
 import numpy as np
 
@@ -10,6 +10,7 @@ from service.physics.engine import Shared, run
 from service.physics.judge import BAD, SUSPECT, Verdict, judge, judge_results
 from service.physics.plans import Plan
 from service.physics.question import Question
+from service.physics.sureness import Asked, Sureness, over_methods, sureness, uncertain
 
 
 @dataclass(frozen=True, slots=True)
@@ -28,7 +29,9 @@ class Outcome:
 
     results: Mapping[str, Array]
     verdict: Verdict
-    chain: tuple["Told", ...] = ()
+    chain: tuple[Told, ...] = ()
+    sure: Mapping[str, Sureness] = field(default_factory=dict)
+    unpublished: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True, slots=True)
@@ -49,6 +52,7 @@ def answer(
     unreadable: Mapping[int, str] | None = None,
     labels: Mapping[str, str] | None = None,
     with_steps: bool = False,
+    asked: Asked | None = None,
 ) -> Answer:
     """Compute the answer to a question.
 
@@ -66,6 +70,8 @@ def answer(
         How the sender knows an input, where not by its own name.
     with_steps : bool
         Whether the calculation is told step by step.
+    asked : Asked, optional
+        How sure the results are to be told.
 
     Returns
     -------
@@ -77,9 +83,12 @@ def answer(
         verdict.reasons[row] = []  # what could not be read is not missing
         verdict.flags[row] = BAD
         verdict.mark([row], BAD, reason)
-    shared: Shared = {}
+    if asked:
+        asked = uncertain(asked, verdict, samples)
+    shared: Shared | None = {} if len(question.plans) > 1 else None
     outcomes = {
-        name: _outcome(question, steps, inputs, verdict, shared, with_steps) for name, steps in question.plans.items()
+        name: _outcome(question, steps, inputs, verdict, shared, with_steps, asked)
+        for name, steps in question.plans.items()
     }
     if len(outcomes) == 1:
         return Answer(question, samples, next(iter(outcomes.values())), {}, {})
@@ -93,8 +102,9 @@ def _outcome(
     steps: Plan,
     inputs: Mapping[str, Array],
     judged: Verdict,
-    shared: Shared,
+    shared: Shared | None,
     with_steps: bool,
+    asked: Asked | None,
 ) -> Outcome:
     known = run(steps, inputs, shared)
     verdict = Verdict(judged.flags.copy(), {row: list(told) for row, told in judged.reasons.items()})
@@ -107,7 +117,10 @@ def _outcome(
         return np.where(lost, np.nan, whole) if any_lost else whole
 
     results = {each.name: told(each.conversion.from_base(known[steps.keys[each.term]])) for each in question.wanted}
-    return Outcome(results, verdict, tuple(_chain(steps, known, told)) if with_steps else ())
+    chain = tuple(_chain(steps, known, told)) if with_steps else ()
+    if asked is None:
+        return Outcome(results, verdict, chain)
+    return Outcome(results, verdict, chain, *sureness(question, steps, known, asked, verdict))
 
 
 def _chain(steps: Plan, known: Mapping[str, Array], told: Callable[[Array], Array]) -> Iterator[Told]:
@@ -133,7 +146,11 @@ def _over(question: Question, outcomes: Mapping[str, Outcome]) -> tuple[Outcome,
             squares = np.where(numbers, (stack - mean) ** 2, 0.0).sum(axis=0)
             spread[each.name] = np.where(count > 1, np.sqrt(squares / (count - 1)), np.nan)
         results[each.name] = np.where(count > 0, mean, np.nan)
-    return Outcome(results, _verdict_over(outcomes)), spread
+    names = [each.name for each in question.wanted]
+    by_method = [outcome.sure for outcome in outcomes.values()]
+    sure = over_methods(by_method, names) if all(by_method) else {}
+    unpublished = tuple(dict.fromkeys(name for outcome in outcomes.values() for name in outcome.unpublished))
+    return Outcome(results, _verdict_over(outcomes), (), sure, unpublished), spread
 
 
 def _verdict_over(outcomes: Mapping[str, Outcome]) -> Verdict:

@@ -3,6 +3,8 @@
 from collections.abc import Collection, Mapping
 from typing import Any
 
+import numpy as np
+
 from service.physics.bibtex import bibtex
 from service.physics.check import evidence
 from service.physics.declare import (
@@ -17,6 +19,7 @@ from service.physics.declare import (
     Step,
     Uncertainty,
 )
+from service.physics.engine import plan, run
 from service.physics.methods import (
     ALWAYS_GIVEN,
     GIVEN,
@@ -182,6 +185,16 @@ def parameterisation_record(name: str) -> dict[str, Any]:
     }
 
 
+def _made_for_wind(step: Step, wind_speed: float) -> bool:
+    """Tell whether a wind at 10 m, and all that follows from it alone, is within a method's range."""
+    known = {"wind_speed_10m": np.array([wind_speed])}
+    for term, (low, high) in step.valid.items():
+        found = plan((term,), frozenset(known), (), next(iter(GASES)))
+        if set(found.leaves) <= set(known) and not low <= run(found, known)[found.keys[term]][0] <= high:
+            return False
+    return True
+
+
 def parameterisations(
     water: str | None = None,
     wind_speed: float | None = None,
@@ -206,9 +219,8 @@ def parameterisations(
 
     def fits(name: str) -> bool:
         step = transfer_methods()[name]
-        low, high = step.valid.get("wind_speed_10m", (float("-inf"), float("inf")))
         made_for_it = water is None or not step.water or water in step.water
-        within = wind_speed is None or low <= wind_speed <= high
+        within = wind_speed is None or _made_for_wind(step, wind_speed)
         enough = inputs is None or not wanting(GASES[gas] if gas else _first_gas(name), inputs, name)
         return made_for_it and within and enough
 

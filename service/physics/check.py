@@ -15,6 +15,7 @@ from service.physics.declare import (
     FAMILIES,
     FAMILY_OF,
     GASES,
+    NO_GAS,
     QUANTITIES,
     SIDES,
     STEPS,
@@ -110,7 +111,7 @@ class Check:
         own = FAMILIES[TRANSFER_FAMILY].given_by
         if own and given & set(SIDES[own].members):
             chosen[TRANSFER_FAMILY] = GIVEN
-        gas = self.gas or next(iter(GASES))  # a plan needs one; nothing here depends on it
+        gas = self.gas or NO_GAS.name
         return plan((self.term,), given, tuple(sorted(chosen.items())), gas)
 
     @cached_property
@@ -312,4 +313,5 @@ def evidence(family: str, method: str, gas: str | None = None) -> dict[str, Any]
     """
     kinds = _kinds().get((family, method, gas), ())
     kind = strongest(kinds)
-    return {"kind": kind, "meaning": KINDS.get(kind, "no check yet"), "checks": len(kinds)}
+    nothing = "no published method: nothing to check" if method in CHOICES else "no check yet"
+    return {"kind": kind, "meaning": KINDS.get(kind, nothing), "checks": len(kinds)}

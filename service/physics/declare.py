@@ -89,6 +89,7 @@ class Term:
     scale: float = 1.0
     holds: Literal["sample", "request"] = "sample"
     per_litre: str | None = None
+    dimension: str | None = None
     example: float | None = None
     used_with: tuple[str, ...] = ()
     of_gas: bool = False
@@ -216,6 +217,7 @@ class Side:
     name: str
     members: tuple[str, ...]
     meaning: str
+    beside: Mapping[str, str] = field(default_factory=dict)
 
 
 @dataclass(frozen=True, slots=True, eq=False)
@@ -292,9 +294,9 @@ def family(
         _file(FAMILY_OF, result, record)
 
 
-def side(name: str, members: Sequence[str], meaning: str) -> None:
-    """Declare inputs of which exactly one may be given."""
-    _file(SIDES, name, Side(name, tuple(members), meaning))
+def side(name: str, members: Sequence[str], meaning: str, **beside: str) -> None:
+    """Declare inputs of which exactly one may be given; a member with another input beside it counts only with it."""
+    _file(SIDES, name, Side(name, tuple(members), meaning, MappingProxyType(beside)))
 
 
 def derived(name: str, of: str, **replace: str) -> None:

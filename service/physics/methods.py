@@ -1,8 +1,12 @@
 """Which methods there are for a gas, and which of them gives a term where some inputs are known."""
 
 from collections.abc import Callable, Collection, Iterable, Mapping
+from dataclasses import replace
 from functools import lru_cache
 from typing import Any
+
+import numpy as np
+from numpy.typing import NDArray
 
 from service.physics.declare import (
     AVERAGING,
@@ -13,10 +17,12 @@ from service.physics.declare import (
     SIDES,
     STEPS,
     TERMS,
+    Array,
     DeclarationError,
     Family,
     Gas,
     Remark,
+    Side,
     Step,
 )
 
@@ -87,8 +93,8 @@ def wanting(gas: Gas, given: Collection[str], method: str) -> tuple[str, ...]:
     return tuple(name for name in choose.leaves(TRANSFER_FAMILY) if choose.lacks(name))
 
 
-def applicable(gas: Gas, water: str, given: Collection[str], wind_averaging: float | None) -> tuple[str, ...]:
-    """Return the transfer velocity methods that stand side by side for a water and the inputs at hand.
+def comparable(gas: Gas, water: str, given: Collection[str], wind_averaging: float | None) -> tuple[str, ...]:
+    """Return the transfer velocity methods that may stand side by side for a water, whatever inputs they want.
 
     Left out are forms for long-term winds unless the wind is a mean over a month or longer, variants of one base, of
     several from one paper all but the recommended, and what has been replaced.
@@ -117,15 +123,29 @@ def applicable(gas: Gas, water: str, given: Collection[str], wind_averaging: flo
         made_for_it = water in record.water or (own is not None and own[0] == name)
         first_of_its_kind = record.in_all and record.variant_of is None and record.replaced_by is None
         in_season = long_term or record.wind_averaging != LONG_TERM
-        return made_for_it and first_of_its_kind and in_season and not wanting(gas, given, name)
+        return made_for_it and first_of_its_kind and in_season
 
     return tuple(name for name in methods_for(gas, FAMILIES[TRANSFER_FAMILY]) if name != GIVEN and fits(name))
+
+
+def applicable(gas: Gas, water: str, given: Collection[str], wind_averaging: float | None) -> tuple[str, ...]:
+    """Return those of the `comparable` methods for which the inputs at hand suffice."""
+    every = comparable(gas, water, given, wind_averaging)
+    return tuple(name for name in every if not wanting(gas, given, name))
 
 
 def side_of(term: str) -> str | None:
     """Return the side that can give a term, for telling a caller what is missing."""
     ways = {step.way for steps in STEPS.get(term, {}).values() for step in steps}
     return next((name for name, record in SIDES.items() if ways & set(record.members)), None)
+
+
+def members_for(side: Side, gas: Gas) -> tuple[str, ...]:
+    """Return the members of a side without those that lead somewhere for other gases alone."""
+    every = [(result, each) for result, ways in STEPS.items() for steps in ways.values() for each in steps]
+    used = {each.way for _, each in every}
+    open_to_it = {each.way for result, each in every if _available(each, result, gas)}
+    return tuple(name for name in side.members if name in open_to_it or name not in used)
 
 
 def terms_of(step: Step) -> tuple[str, ...]:
@@ -155,11 +175,16 @@ def _available(step: Step, result: str, gas: Gas) -> bool:
     return not step.needs_coefficients or gas.block(result, step.method) is not None
 
 
+def _never(*_: Array) -> NDArray[np.bool_]:
+    return np.array([False])
+
+
 class Chooser:
     """The choice of steps for one gas, the inputs given, and the methods asked for."""
 
     def __init__(self, gas: Gas, given: Collection[str], chosen: Mapping[str, str]) -> None:
         self.gas, self.given = gas, given
+        self.whatever_basis = {*given, *(name.removesuffix("_per_litre") for name in given)}
         self.methods = {
             name: method
             for name, family in FAMILIES.items()
@@ -181,15 +206,16 @@ class Chooser:
         for method in dict.fromkeys((self._method_of(term), None)):
             ways = [s for s in STEPS.get(term, {}).get(method, ()) if _available(s, term, self.gas)]
             for known in (self.given, self.defaults, (None,)):
-                for step in ways:
-                    if step.way in known and set(step.beside) <= set(self.given):
-                        return step
+                fit = [s for s in ways if s.way in known and self.whatever_basis.issuperset(s.beside)]
+                if fit:
+                    return max(fit, key=lambda step: len(step.beside))
         return None
 
     def remarks(self, step: Step) -> list[Remark]:
-        """Return the remarks of a step that apply to what is given."""
+        """Return the remarks of a step for what is given; one that another input answers is kept but never applies."""
         given = set(self.given)
-        return [r for r in remarks_of(step) if given.issuperset(r.if_given) and given.isdisjoint(r.unless_given)]
+        asked = (remark for remark in remarks_of(step) if given.issuperset(remark.if_given))
+        return [each if given.isdisjoint(each.unless_given) else replace(each, applies=_never) for each in asked]
 
     def constant(self, term: str) -> float | None:
         """Return the constant that the gas, the method chosen for the term's family, or the term itself brings."""

@@ -15,8 +15,9 @@ import service.physics.sides
 import service.physics.terms
 import service.physics.transfer_terms
 import service.physics.wind
-import service.physics.wind_moments  # noqa: F401  imported for what they declare
-from service.physics import gases, schmidt_number, solubility, transfer_velocity
+import service.physics.wind_moments
+import service.physics.wind_profiles  # noqa: F401  imported for what they declare
+from service.physics import carbonate, gases, schmidt_number, solubility, transfer_velocity
 from service.physics.declare import Quantity, quantity
 
 
@@ -26,7 +27,7 @@ def _load_all(package: ModuleType) -> None:
         import_module(module.name)
 
 
-for _package in (solubility, schmidt_number, transfer_velocity, gases):
+for _package in (solubility, schmidt_number, transfer_velocity, carbonate, gases):
     _load_all(_package)
 
 TRANSFER = ("transfer_velocity", "transfer_velocity_600", "transfer_velocity_660")
@@ -97,6 +98,7 @@ FLUX = quantity(
             "density",
             "bubble_injection",
             "steady_state_supersaturation",
+            "revelle_factor",
         ),
         needs_side={"wind_speed_10m": "wind_speed"},
         sides=("water_side", "air_side"),
@@ -115,6 +117,6 @@ EQUILIBRATION = quantity(
             "storage_ratio",
             "transfer_velocity",
         ),
-        more=("total_transfer_velocity", "schmidt_number", "wind_speed_10m"),
+        more=("total_transfer_velocity", "schmidt_number", "wind_speed_10m", "revelle_factor"),
     )
 )

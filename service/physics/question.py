@@ -8,7 +8,7 @@ from typing import Any
 import numpy as np
 
 from service.physics import quantities  # noqa: F401  imported for what it declares
-from service.physics.declare import FAMILIES, FAMILY_OF, SIDES, TERMS, Gas, Quantity, Remark, Step
+from service.physics.declare import FAMILIES, FAMILY_OF, SIDES, TERMS, Gas, Quantity, Remark, Side, Step
 from service.physics.engine import plan
 from service.physics.faults import Fault, Refused
 from service.physics.methods import (
@@ -16,6 +16,7 @@ from service.physics.methods import (
     LONG_TERM,
     TRANSFER_FAMILY,
     default_method,
+    members_for,
     method_by_input,
     methods_for_water,
     methods_giving,
@@ -102,7 +103,7 @@ def ask(
         Naming everything that is wrong, as far as it can be told at once.
     """
     given = _with_partners(given, optional)
-    _check_sides(given)
+    _check_sides(given, gas)
     names = pick or _main_results(quantity, gas, given, dict(chosen))
     methods = dict(chosen)
     wanted = tuple(_wanted(quantity, gas, name, dict(units), mass_as, methods) for name in names)
@@ -121,7 +122,7 @@ def ask(
         )
     first = next(iter(plans.values()))
     asked = methods | ({TRANSFER_FAMILY: ""} if parameterisations else {})
-    _check_inputs(plans.values(), water, gas)
+    _check_inputs(plans.values(), water, gas, given)
     _check_spread(plans.values(), given)
     _check_unused(quantity, gas, given, optional, methods, parameterisations)
     if TRANSFER_FAMILY not in asked and water not in (None, "ocean", "coastal") and _uses_transfer(first):
@@ -158,12 +159,24 @@ def _with_partners(given: frozenset[str], optional: frozenset[str]) -> frozenset
     return given - alone
 
 
-def _check_sides(given: frozenset[str]) -> None:
+def _check_sides(given: frozenset[str], gas: Gas) -> None:
+    sent = {name.removesuffix("_per_litre") for name in given}
     for side in SIDES.values():
-        present = [name for name in given if name.removesuffix("_per_litre") in side.members]
+        members = members_for(side, gas)
+        present = [name for name in members if name in sent and side.beside.get(name, name) in sent]
         if len(present) > 1:
             names = " and ".join(sorted(present))
-            raise Refused(Fault("two_ways", names, f"both say {side.meaning}: send one", ", ".join(side.members)))
+            raise Refused(Fault("two_ways", names, f"both say {side.meaning}: send one", ", ".join(members)))
+
+
+def _side_missing(side: Side, gas: Gas, given: frozenset[str]) -> Fault:
+    members, sent = members_for(side, gas), {name.removesuffix("_per_litre") for name in given}
+    for name in members:
+        if name in sent and (partner := side.beside.get(name)) and partner not in sent:
+            told = f"is needed beside {name}, which alone does not tell {side.meaning}"
+            return Fault("missing_input", partner, told, f"{TERMS[partner].meaning} [{TERMS[partner].unit}]")
+    allowed = ", ".join(f"{name} with {side.beside[name]}" if name in side.beside else name for name in members)
+    return Fault("missing_input", side.name, f"is needed: {side.meaning}; send exactly one of {allowed}", allowed)
 
 
 def _main_results(quantity: Quantity, gas: Gas, given: frozenset[str], chosen: Mapping[str, str]) -> tuple[str, ...]:
@@ -200,7 +213,7 @@ def _wanted(
     return Wanted(name, term.per_litre if other_basis and term.per_litre else name, change, standard)
 
 
-def _check_inputs(plans: Iterable[Plan], water: str | None, gas: Gas) -> None:
+def _check_inputs(plans: Iterable[Plan], water: str | None, gas: Gas, given: frozenset[str]) -> None:
     faults: dict[str, Fault] = {}
     for each in plans:
         for term in each.missing:
@@ -208,12 +221,7 @@ def _check_inputs(plans: Iterable[Plan], water: str | None, gas: Gas) -> None:
             if family and (method := each.methods.get(family.name)):
                 faults[term] = _not_by_method(term, family.option, method, methods_giving(term, gas))
             elif side:
-                faults[side.name] = Fault(
-                    "missing_input",
-                    side.name,
-                    f"is needed: {side.meaning}; send exactly one of {', '.join(side.members)}",
-                    ", ".join(side.members),
-                )
+                faults[side.name] = _side_missing(side, gas, given)
             elif TERMS[term].is_input:
                 unit = TERMS[term].unit
                 faults[term] = Fault("missing_input", term, f"is needed: {TERMS[term].meaning} [{unit}]")

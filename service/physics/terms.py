@@ -19,6 +19,7 @@ input_term(
     "1",
     "practical salinity, PSS-78; 0 is fresh water",
     possible=(0.0, 60.0),
+    dimension="salinity",
     scale=10.0,
     example=35.1,
 )
@@ -312,8 +313,12 @@ side(
         "water_fugacity",
         "water_concentration",
         "water_saturation",
+        "dissolved_inorganic_carbon",
+        "ph",
     ),
     "what is known of the gas in the water",
+    dissolved_inorganic_carbon="alkalinity",
+    ph="alkalinity",
 )
 side(
     "air_side",

@@ -5,7 +5,7 @@ import math
 import pytest
 from flask.testing import FlaskClient
 
-from schemas.requests import quantity_inputs
+from schemas.vocabulary import quantity_inputs
 from service.physics.declare import QUANTITIES
 from tests.api.questions import QUESTIONS, address, faults, number, quality, values
 

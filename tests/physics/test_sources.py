@@ -117,9 +117,7 @@ def test_a_key_has_a_suffix_only_where_another_publication_shares_its_stem() -> 
 
 @ALL
 def test_every_author_is_a_surname_with_initials_or_the_short_name_of_a_body(source: Source) -> None:
-    wrong = [
-        name for name in source.authors.split("; ") if not (PERSON.fullmatch(name) or BODY.fullmatch(name))
-    ]
+    wrong = [name for name in source.authors.split("; ") if not (PERSON.fullmatch(name) or BODY.fullmatch(name))]
 
     assert wrong == []
 

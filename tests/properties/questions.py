@@ -41,11 +41,15 @@ OPEN_SEA: dict[str, Limits] = {  # where people measure; a law is tried within, 
 }
 
 
-def transfer_pairs() -> list[tuple[str, str]]:
-    """Return every transfer velocity method with every gas that it can answer for."""
-    family = FAMILIES[TRANSFER_FAMILY]
+def transfer_pairs(*usual: str) -> list[tuple[str, str]]:
+    """Return every published transfer velocity method with some gases, or with the first that it can answer for."""
+    family, found = FAMILIES[TRANSFER_FAMILY], []
     by_gas = {gas: methods_for(record, family) for gas, record in GASES.items()}
-    return [(method, gas) for method in transfer_methods() for gas in GASES if method in by_gas[gas]]
+    published = [name for name, record in transfer_methods().items() if record.way is None]  # not the caller's own
+    for method in published:
+        gases = [gas for gas in GASES if method in by_gas[gas]]
+        found += [(method, gas) for gas in gases if gas in usual] or [(method, gases[0])]
+    return found
 
 
 def methods_and_gases(family: str) -> list[tuple[str, str]]:

@@ -100,6 +100,8 @@ term("revelle_factor", "1", "relative change of the fugacity over that of total 
 term("carbon_at_equilibrator", "umol kg-1", "total carbon of the water in the equilibrator")
 term("carbon_before_headspace", "umol kg-1", "total carbon in a bottle before its headspace was added")
 term("fugacity_after_equilibrator", "uatm", "fugacity in situ of the total carbon in the equilibrator")
+term("hydrogen_ion_of_pair", "mol kg-1", "hydrogen ion from alkalinity and total carbon of the water")
+term("carbon_at_equilibrator_below_takahashi", "umol kg-1", "the same, only where takahashi-1993 is not the default")
 term("salinity_below_takahashi", "1", "salinity where takahashi-1993 is not the default, no number elsewhere")
 term("fugacity_after_equilibrator_below_takahashi", "uatm", "the same, only where takahashi-1993 is not the default")
 term("hydrogen_ion_of_water_side", "mol kg-1", "hydrogen ion from alkalinity and the fugacity in the water")
@@ -114,6 +116,20 @@ derived(
     of="carbon_by_fugacity",
     carbonate_fugacity="fugacity_at_equilibrator",
     **IN_THE_EQUILIBRATOR,
+)
+derived("hydrogen_ion_of_pair", of="hydrogen_ion_by_carbon", carbonate_carbon="dissolved_inorganic_carbon")
+derived(
+    "carbon_at_equilibrator_below_takahashi",
+    of="carbon_by_fugacity",
+    carbonate_fugacity="fugacity_at_equilibrator",
+    salinity="salinity_below_takahashi",
+    **IN_THE_EQUILIBRATOR,
+)
+derived(
+    "fugacity_after_equilibrator_below_takahashi",
+    of="fugacity_by_carbon",
+    carbonate_carbon="carbon_at_equilibrator_below_takahashi",
+    salinity="salinity_below_takahashi",
 )
 derived("fugacity_after_equilibrator", of="fugacity_by_carbon", carbonate_carbon="carbon_at_equilibrator")
 derived("fugacity_before_headspace", of="fugacity_by_carbon", carbonate_carbon="carbon_before_headspace")

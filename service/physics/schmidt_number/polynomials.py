@@ -44,14 +44,14 @@ def between(rows: Rows, water_temperature: Array, salinity: Array) -> Array:
     (...) array
         [1]
     """
-    nothing = np.full_like(water_temperature, np.nan)
-    sea = nothing if rows.sea is None else polynomial(rows.sea, water_temperature)
-    fresh = nothing if rows.fresh is None else polynomial(rows.fresh, water_temperature)
-    if rows.fresh is None:
-        return np.where(salinity >= SEA_SALINITY, sea, np.nan)
-    if rows.sea is None:
-        return np.where(salinity < BRACKISH_LIMIT, fresh, np.nan)
-    return fresh + (sea - fresh) * (salinity / SEA_SALINITY)
+    sea, fresh = rows
+    if sea is None or fresh is None:
+        alone = polynomial(sea or fresh or (np.nan,), water_temperature)
+        offered = salinity >= SEA_SALINITY if fresh is None else salinity < BRACKISH_LIMIT
+        return np.where(offered, alone, np.nan)
+    of_fresh_water = polynomial(fresh, water_temperature)
+    of_sea_water = polynomial(sea, water_temperature)
+    return of_fresh_water + (of_sea_water - of_fresh_water) * (salinity / SEA_SALINITY)
 
 
 @step(

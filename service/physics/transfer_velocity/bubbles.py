@@ -5,7 +5,7 @@ import numpy as np
 from service.physics import sources
 from service.physics.constants import CM_PER_HOUR, GRAVITY, SECONDS_PER_DAY
 from service.physics.declare import Array, step
-from service.physics.transfer_velocity.reference import COMMON_RANGE, REFERENCE, SEA, reference
+from service.physics.transfer_velocity.reference import COMMON_RANGE, FRICTION_RANGE, REFERENCE, SEA, reference
 
 K = "transfer_velocity_without_rain"
 INJECTION = "bubble_injection_per_atmosphere"
@@ -119,6 +119,8 @@ def _liang_injection(water: Array, schmidt_number: Array, solubility: Array, fac
     source=sources.LIANG_2013,
     equation="surface and bubble terms",
     formula="k = 1.3e-4 u*a (660/Sc)^1/2 [m s-1] + 1.98e6 u*w^2.76 (Sc/660)^-2/3 [cm h-1], u*w = u*a (1.2/rho)^1/2",
+    valid={"friction_velocity_air": FRICTION_RANGE},
+    range_kind="common practice",
     water=SEA,
     wind_averaging="short",
     note="Coefficients from memory. Takes friction_velocity where it is sent, else that of the wind profile.",
@@ -195,6 +197,8 @@ def liang_2013_injection(
     source=sources.EMERSON_2019,
     equation="bubble terms of Liang et al. (2013) times 0.29",
     formula="k = 1.3e-4 u*a (660/Sc)^1/2 [m s-1] + 0.29 1.98e6 u*w^2.76 (Sc/660)^-2/3 [cm h-1]",
+    valid={"friction_velocity_air": FRICTION_RANGE},
+    range_kind="common practice",
     water=SEA,
     wind_averaging="short",
     variant_of="liang-2013",
@@ -272,6 +276,8 @@ REICHL_DEIKE_2020_BUBBLES = 1.2e-5  # s2 m-2, A_B, +- 0.2e-5; from memory
     equation="non-bubble and bubble parts",
     formula="k660 = 1.55e-4 u* + 1.2e-5 / L u*^(5/3) (g Hs)^(2/3) [m s-1], u* in the air, L Ostwald",
     supplies=reference(660.0),
+    valid={"friction_velocity_air": FRICTION_RANGE},
+    range_kind="common practice",
     water=SEA,
     wind_averaging="short",
     note="Coefficients from memory; A_B is 1.2e-5 +- 0.2e-5 s2 m-2. Takes friction_velocity where it is sent.",

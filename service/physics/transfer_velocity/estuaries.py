@@ -237,4 +237,5 @@ def rosentreter_2017_ch4(wind_speed_10m: Array, flow_velocity: Array, water_dept
     return _rosentreter_2017(ROSENTRETER_2017_CH4, wind_speed_10m, flow_velocity, water_depth)
 
 
-set_negative_to_zero("rosentreter-2017-co2", "rosentreter-2017-ch4")
+set_negative_to_zero("rosentreter-2017-co2", gases=("co2",))
+set_negative_to_zero("rosentreter-2017-ch4", gases=("ch4",))

@@ -3,7 +3,7 @@
 from service.physics import sources
 from service.physics.declare import Array, relative_uncertainty, step
 from service.physics.polynomial import polynomial
-from service.physics.transfer_velocity.reference import COMMON_RANGE, REFERENCE, SEA, moments, reference
+from service.physics.transfer_velocity.reference import COMMON_RANGE, FRICTION_RANGE, REFERENCE, SEA, moments, reference
 
 MCGILLIS_2001 = (3.3, 0.0, 0.0, 0.026)  # cm h-1 per power of m s-1; McGillis et al. (2001)
 
@@ -178,6 +178,8 @@ def yang_2022(wind_speed_10m: Array, wind_speed_10m_second_moment: Array) -> Arr
     equation="abstract",
     formula="k660 = 1.47 + 76.67 u* + 20.48 u*^2, u* in the air",
     supplies=reference(660.0),
+    valid={"friction_velocity_air": FRICTION_RANGE},
+    range_kind="common practice",
     uncertainty=YANG_2022_SPREAD,
     water=SEA,
     wind_averaging="short",

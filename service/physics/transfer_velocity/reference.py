@@ -6,6 +6,7 @@ from service.physics.declare import Array, Limits
 
 SEA = ("ocean", "coastal")
 COMMON_RANGE: Limits = (0.0, 20.0)  # m s-1, common practice where authors state none
+FRICTION_RANGE: Limits = (0.0, 0.85)  # m s-1 in the air, what 20 m s-1 make by the drag of Smith (1988)
 SQUARE_ROOT = 0.5  # Schmidt exponent of a wavy surface without bubbles
 REFERENCE = "transfer_velocity_at_reference"
 

@@ -67,14 +67,15 @@ def never_negative(
     return transfer_velocity(at_reference, reference_schmidt_number, schmidt_exponent, schmidt_number)
 
 
-def set_negative_to_zero(*methods: str) -> None:
-    """Declare that methods whose fit can fall below zero give 0 there, and say so."""
+def set_negative_to_zero(*methods: str, gases: tuple[str, ...] = ()) -> None:
+    """Declare that methods, of some gases only, whose fit can fall below zero give 0 there, and say so."""
     for method in methods:
         step(
             "transfer_velocity_without_rain",
             method=method,
             formula="k = max(k_ref, 0) (Sc/Sc_ref)^-n",
             remarks=(NEGATIVE,),
+            gases=gases,
         )(never_negative)
 
 
