@@ -75,7 +75,7 @@ def document(version: str, limits: Mapping[str, int], statuses: Statuses) -> dic
         In the same order whenever it is made, so that its bytes do not change.
     """
     plugin = MarshmallowPlugin()
-    spec = APISpec(
+    specification = APISpec(
         title="Catspaw",
         version=version,
         openapi_version="3.1.0",
@@ -88,45 +88,45 @@ def document(version: str, limits: Mapping[str, int], statuses: Statuses) -> dic
         security=ANYONE_OR_TOKEN,
         tags=[{"name": name, "description": text} for name, text in TAGS.items()],
         plugins=[plugin],
-        **{"x-limits": dict(limits), "x-codes": CODES, "x-unit-lists": unit_lists(), "x-patterns": patterned()},
+        **{"x-limits": dict(limits), "x-codes": CODES, "x-unit-lists": unit_lists()},
     )
     if plugin.converter is None:
         raise LookupError("apispec brings no converter of fields")
     plugin.converter.add_attribute_function(own_fields)  # type: ignore[no-untyped-call]  # apispec leaves it untyped
-    _common(spec, statuses)
+    _common(specification, statuses)
     for quantity in QUANTITIES.values():
-        _quantity(spec, quantity, plugin.converter)
+        _quantity(specification, quantity, plugin.converter)
     for address in catalogue.addresses():
-        _address(spec, address)
-    return spec.to_dict()
+        _address(specification, address)
+    return specification.to_dict()
 
 
-def _common(spec: APISpec, statuses: Statuses) -> None:
+def _common(specification: APISpec, statuses: Statuses) -> None:
     """Put what several addresses share among the components."""
     shared = value_schemas() | answers.answer_schemas() | catalogue.catalogue_schemas()
     for name, described in {**shared, "Problem": answers.problem_schema(statuses)}.items():
-        spec.components.schema(name, described)
+        specification.components.schema(name, described)
     for name, described in answers.headers().items():
-        spec.components.header(name, described)
+        specification.components.header(name, described)
     for name, described in answers.problem_responses(statuses).items():
-        spec.components.response(name, described)
-    spec.components.response("not-modified", answers.NOT_MODIFIED)
-    spec.components.security_scheme("token", {"type": "http", "scheme": "bearer"})
-    spec.components.security_scheme("password", {"type": "http", "scheme": "basic"})
+        specification.components.response(name, described)
+    specification.components.response("not-modified", answers.NOT_MODIFIED)
+    specification.components.security_scheme("token", {"type": "http", "scheme": "bearer"})
+    specification.components.security_scheme("password", {"type": "http", "scheme": "basic"})
 
 
-def _shared(spec: APISpec, parameter: Described, component: str = "") -> Any:
+def _shared(specification: APISpec, parameter: Described, component: str = "") -> Any:
     """Return a parameter by reference where every address has the same, else as it is."""
-    name, known = component or parameter["name"], spec.components.parameters
+    name, known = component or parameter["name"], specification.components.parameters
     if name not in known:
-        spec.components.parameter(name, parameter["in"], parameter)
+        specification.components.parameter(name, parameter["in"], parameter)
     return name if known[name] == parameter else parameter
 
 
-def _member(spec: APISpec, name: str, member: Described) -> Described:
-    known = spec.components.schemas
+def _member(specification: APISpec, name: str, member: Described) -> Described:
+    known = specification.components.schemas
     if name not in known:
-        spec.components.schema(name, member)
+        specification.components.schema(name, member)
     return schema(name) if known[name] == member else member
 
 
@@ -134,24 +134,26 @@ def _problems(statuses: tuple[int, ...]) -> Described:
     return {str(status): ref("responses", f"problem-{status}") for status in statuses}
 
 
-def _quantity(spec: APISpec, quantity: Quantity, converter: OpenAPIConverter) -> None:
+def _quantity(specification: APISpec, quantity: Quantity, converter: OpenAPIConverter) -> None:
     """Add the address of a quantity."""
     sent = Sent(quantity, request_fields(quantity), converter)
     parameters, examples = sent.parameters(), quantity_examples(quantity)
-    spec.components.schema(f"Answer.{quantity.name}", answers.answer_schema(quantity))
+    specification.components.schema(f"Answer.{quantity.name}", answers.answer_schema(quantity))
     body = {
         "type": "object",
-        "properties": {name: _member(spec, name, member) for name, member in sent.members().items()},
-        "patternProperties": patterned(),
+        "properties": {name: _member(specification, name, member) for name, member in sent.members().items()},
+        "patternProperties": patterned(quantity),
         "additionalProperties": False,
     }
-    spec.components.schema(f"Request.{quantity.name}", body)
+    specification.components.schema(f"Request.{quantity.name}", body)
     name = quantity.name.replace("-", "_")
     about = {"tags": ["quantities"], "summary": quantity.title}
     answer = ref("responses", f"answer-{quantity.name}")
-    spec.components.response(f"answer-{quantity.name}", answers.computed_response(quantity))
+    specification.components.response(f"answer-{quantity.name}", answers.computed_response(quantity))
     needed = [
-        _shared(spec, p | {"required": True}, f"needed-{p['name']}") for p in parameters if p["name"] in sent.required
+        _shared(specification, p | {"required": True}, f"needed-{p['name']}")
+        for p in parameters
+        if p["name"] in sent.required
     ]
     operations: dict[str, Any] = {
         "get": {
@@ -172,8 +174,8 @@ def _quantity(spec: APISpec, quantity: Quantity, converter: OpenAPIConverter) ->
         "x-results": quantity_results(quantity),
         "x-examples": examples,
     }
-    every = [_shared(spec, each) for each in (*parameters, *URL_ONLY)]
-    spec.path(f"/v1/{quantity.name}", operations=operations, parameters=every)
+    every = [_shared(specification, each) for each in (*parameters, *URL_ONLY)]
+    specification.path(f"/v1/{quantity.name}", operations=operations, parameters=every)
 
 
 def _body(quantity: Quantity, examples: list[Example]) -> Described:
@@ -195,7 +197,7 @@ def _body(quantity: Quantity, examples: list[Example]) -> Described:
     }
 
 
-def _address(spec: APISpec, address: catalogue.Address) -> None:
+def _address(specification: APISpec, address: catalogue.Address) -> None:
     """Add an address of the catalogue."""
     url_only = URL_ONLY[1:] if address.checks_query else ()
     text = {"text/plain": {"type": "string"}} if address.checks_query else {}
@@ -204,7 +206,9 @@ def _address(spec: APISpec, address: catalogue.Address) -> None:
         "tags": [address.tag],
         "summary": address.summary,
         "operationId": f"get_{address.operation}",
-        "parameters": [_shared(spec, each) if each in URL_ONLY else each for each in (*address.parameters, *url_only)],
+        "parameters": [
+            _shared(specification, each) if each in URL_ONLY else each for each in (*address.parameters, *url_only)
+        ],
         "responses": {
             "200": answer,
             **({"304": ref("responses", "not-modified")} if address.cached else {}),
@@ -213,4 +217,4 @@ def _address(spec: APISpec, address: catalogue.Address) -> None:
     }
     if address.open_to_all:
         operation["security"] = []
-    spec.path(address.path, operations={"get": operation})
+    specification.path(address.path, operations={"get": operation})

@@ -6,9 +6,17 @@ from functools import lru_cache
 from typing import Any
 
 from schemas.vocabulary import family_choices, quantity_families, quantity_inputs
-from service.physics.declare import FAMILIES, GASES, SIDES, TERMS, Family, Gas, Quantity, Side
+from service.physics.declare import FAMILIES, GASES, SIDES, STEPS, TERMS, Family, Gas, Quantity, Side
 from service.physics.engine import plan
-from service.physics.methods import GIVEN, TRANSFER_FAMILY, default_method, methods_for_water, side_of
+from service.physics.methods import (
+    GIVEN,
+    TRANSFER_FAMILY,
+    default_method,
+    members_for,
+    methods_for_water,
+    remarks_of,
+    side_of,
+)
 from service.physics.plans import Plan
 
 FIRST_GASES = ("co2", "o2")  # most often asked for; another gas stands in examples only where these have no answer
@@ -58,14 +66,31 @@ def usual_gases() -> list[Gas]:
 
 def _ways(quantity: Quantity) -> Iterator[Way]:
     """Yield a plan for every gas by default, every method that is offered, and every number of the caller's own."""
-    for gas in GASES.values():
+    usual = usual_gases()[0]
+    for gas in GASES.values() if quantity.of_gas else [usual]:
         yield Way(plan_for(quantity, gas))
     for family in quantity_families(quantity):
+        alike = {_shape(family, default_method(usual, family)): plan_for(quantity, usual)}
         for method, gases in gases_by_choice(family).items():
-            by_method = plan_for(quantity, GASES[gases[0]], chosen=[(family.name, method)])
-            yield Way(by_method, family.option, method)
+            shape = _shape(family, method)  # what hangs on the gas is in the plans by default
+            if shape not in alike:
+                alike[shape] = plan_for(quantity, GASES[gases[0]], chosen=[(family.name, method)])
+            yield Way(alike[shape], family.option, method)
         for member in SIDES[family.given_by].members if family.given_by else ():
-            yield Way(plan_for(quantity, usual_gases()[0], [member], [(family.name, GIVEN)]))
+            yield Way(plan_for(quantity, usual, [member], [(family.name, GIVEN)]))
+
+
+def _shape(family: Family, method: str | None) -> tuple[Any, ...]:
+    """Return all that a plan depends on in a method, so that of many methods alike one is planned."""
+    return tuple(
+        (
+            *(result, each.parameters, each.way, each.beside, each.needs_given, each.gases, each.same_as, each.assumes),
+            *(tuple(each.supplies), tuple(each.valid), tuple(each.recommended)),
+            *(remark.terms for remark in remarks_of(each)),
+        )
+        for result in family.results
+        for each in STEPS.get(result, {}).get(method, ())
+    )
 
 
 def quantity_needs(quantity: Quantity) -> list[dict[str, Any]]:
@@ -99,7 +124,8 @@ def _brought_along(quantity: Quantity) -> dict[str, list[str]]:
     """Return the inputs that are needed only because another one is sent, with those others."""
     gas, found = usual_gases()[0], dict[str, list[str]]()
     anyway = plan_for(quantity, gas, more=True).missing
-    for name in quantity_inputs(quantity):
+    leading = {step.way for by_method in STEPS.values() for ways in by_method.values() for step in ways}
+    for name in (each for each in quantity_inputs(quantity) if each in leading):
         for other in plan_for(quantity, gas, [name], more=True).missing:
             if other not in anyway and TERMS[other].is_input:
                 found.setdefault(other, []).append(name)
@@ -130,7 +156,8 @@ def quantity_sides(quantity: Quantity) -> list[dict[str, Any]]:
     -------
     list of dict
         ``name``, ``meaning``, ``members``; ``needed_for_gases``, those of which nothing is assumed;
-        ``needed_for_results``, those that are left out without it; ``default_by_gas``, what is assumed for others.
+        ``needed_for_results``, those that are left out without it; ``default_by_gas``, what is assumed for others;
+        ``beside``, the input without which a member tells nothing; ``gases_by_member``, where not every gas has it.
     """
     inputs = set(quantity_inputs(quantity))
     return [_side(quantity, side) for side in SIDES.values() if inputs & set(side.members)]
@@ -145,14 +172,28 @@ def _side(quantity: Quantity, side: Side) -> dict[str, Any]:
             defaults[gas.name] = assumed
         if any(side_of(term) == side.name for term in plan_for(quantity, gas).missing):
             needed.append(gas.name)
-    return {
+    members = [name for name in side.members if name in quantity_inputs(quantity)]
+    told: dict[str, Any] = {
         "name": side.name,
         "meaning": side.meaning,
-        "members": [name for name in side.members if name in quantity_inputs(quantity)],
+        "members": members,
         "needed_for_gases": needed,
         "needed_for_results": [name for name, of in quantity.needs_side.items() if of == side.name],
         "default_by_gas": defaults,
     }
+    if side.beside:
+        told["beside"] = dict(side.beside)
+    if some := {name: gases for name, gases in _gases_by_member(side.name).items() if name in members}:
+        told["gases_by_member"] = some
+    return told
+
+
+@lru_cache(maxsize=32)
+def _gases_by_member(side: str) -> dict[str, list[str]]:
+    """Return those members of a side that are not for every gas, with the gases they are for."""
+    by_gas = {gas.name: members_for(SIDES[side], gas) for gas in GASES.values()}
+    found = {name: [gas for gas, members in by_gas.items() if name in members] for name in SIDES[side].members}
+    return {name: gases for name, gases in found.items() if len(gases) < len(GASES)}
 
 
 def quantity_results(quantity: Quantity) -> list[dict[str, Any]]:

@@ -12,7 +12,7 @@ from schemas.needs import defaults_by_gas, gases_by_choice
 from schemas.options import Choice, Line, OptionNumber, Words
 from schemas.requests import CORRELATION, SAMPLES_LIMIT
 from schemas.samples import MISSING_MARKS, NUMBER, Measured
-from schemas.vocabulary import UNCERTAIN, quantity_families
+from schemas.vocabulary import UNCERTAIN, quantity_families, quantity_inputs
 from service.physics.declare import GASES, QUANTITIES, SIDES, TERMS, Family, Quantity, Term
 from service.physics.question import known_names
 from service.physics.units import allowed
@@ -112,7 +112,7 @@ def units_of(term: Term) -> list[str]:
 
 def unit_list(term: Term) -> str:
     """Return the name of the list of units that a term has in common with others."""
-    if term.name.removeprefix(UNCERTAIN) == "salinity":
+    if term.name == "salinity":
         return "practical salinity"
     return f"{term.unit} of a gas" if term.of_gas else term.unit
 
@@ -130,15 +130,17 @@ def _bare(term: Term) -> Described:
 
 def term_facts(term: Term) -> Described:
     """Return what a page needs to know of an input, beyond how its value is written."""
-    facts: Described = {"x-units": unit_list(term), "x-holds": term.holds}
     if term.name not in TERMS:
-        facts["x-uncertainty-of"] = term.name.removeprefix(UNCERTAIN)
+        return {"x-uncertainty-of": term.name.removeprefix(UNCERTAIN)}
+    facts: Described = {"x-units": unit_list(term), "x-holds": term.holds}
     if term.above_lower_limit:
         facts["x-above-lower-limit"] = True
     if term.no_default_for_water:
         facts["x-no-default-for-water"] = list(term.no_default_for_water)
     if side := next((side.name for side in SIDES.values() if term.name in side.members), None):
         facts["x-side"] = side
+    if term.used_with:
+        facts["x-used-with"] = list(term.used_with)
     if term.standard_name:
         facts["x-standard-name"] = term.standard_name
     return facts
@@ -166,12 +168,22 @@ def _family_facts(family: Family) -> Described:
     return {"x-default-by-gas": defaults_by_gas(family), **({"x-gases-by-choice": some} if some else {})}
 
 
-def patterned() -> dict[str, Described]:
-    """Return what is sent under names that are made of other names: a pattern for them to what may stand there."""
+def patterned(quantity: Quantity) -> dict[str, Described]:
+    """Return what is sent under names made of other names: a pattern for the name to what may stand there."""
+    names = "|".join(quantity_inputs(quantity))
     number = {"type": "number", "minimum": -1, "maximum": 1}
     text = {"type": "string", "pattern": rf"^\s*(?:{NUMBER.pattern})\s*$"}
-    description = f"`{CORRELATION}a.b`: correlation of two inputs whose standard uncertainties are sent"
-    return {rf"^{re.escape(CORRELATION)}\w+\.\w+$": {"description": description, "anyOf": [number, text]}}
+    return {
+        rf"^{UNCERTAIN}(?:{names})$": {
+            "$ref": "#/components/schemas/Value",
+            "description": "standard uncertainty of the input, in the unit in which that is sent",
+        },
+        rf"^unit\.(?:{'|'.join(known_names(quantity))})$": {"type": "string", "description": "unit of the result"},
+        rf"^{re.escape(CORRELATION)}\w+\.\w+$": {
+            "description": "correlation of two inputs whose standard uncertainties are sent",
+            "anyOf": [number, text],
+        },
+    }
 
 
 def own_fields(_: OpenAPIConverter, field: fields.Field[Any], **__: Any) -> Described:
@@ -208,14 +220,16 @@ class Sent:
         """Return the members of a JSON body by name; what a page needs beyond the value stands on the parameter."""
         found = {}
         for name, field in self.fields.items():
+            if isinstance(field, Measured) and field.term.name not in TERMS:
+                continue  # told by a pattern
             member = self.converter.field2property(field)
             if isinstance(field, Measured):
-                term = _term_of(field)
-                member |= _bare(term) | ({} if term.default is None else {"default": term.default})
+                assumed = field.term.default
+                member |= _bare(field.term) | ({} if assumed is None else {"default": assumed})
             if isinstance(field, Choice) and (default := self._first(name, field)) is not None:
                 member["default"] = default
             found[name] = member
-        return found | {f"unit.{name}": schema | about for name, schema, about in self._units()}
+        return found
 
     def parameters(self) -> list[Described]:
         """Return the query parameters, in the order of the vocabulary."""

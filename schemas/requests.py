@@ -21,6 +21,7 @@ from schemas.vocabulary import (
 from service.physics.declare import (
     FAMILIES,
     GASES,
+    NO_GAS,
     TERMS,
     Family,
     Gas,
@@ -93,7 +94,7 @@ def _faults(error: ValidationError) -> list[Fault]:
 
 
 def _request(quantity: Quantity, loaded: dict[str, Any], units: Mapping[str, Any]) -> Request:
-    gas = GASES[loaded["gas"]]
+    gas = GASES[loaded["gas"]] if quantity.of_gas else NO_GAS
     readings = {name: value for name, value in loaded.items() if isinstance(value, Reading)}
     doubtful = {name: readings.pop(name) for name in list(readings) if name.startswith(UNCERTAIN)}
     options = {name: value for name, value in loaded.items() if not isinstance(value, Reading)}

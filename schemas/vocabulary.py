@@ -60,10 +60,12 @@ def family_choices(family: Family, gas: Gas | None = None) -> list[str]:
 @lru_cache(maxsize=32)
 def request_fields(quantity: Quantity) -> dict[str, fields.Field[Any]]:
     """Return the fields of a quantity's request by their names."""
-    found: dict[str, fields.Field[Any]] = {
-        "gas": Choice(GASES, forgiving=True, required=True, metadata={"description": "the gas"}),
-        "water": Choice(WATERS, metadata={"description": "the kind of water; never guessed"}),
-    }
+    found: dict[str, fields.Field[Any]] = {}
+    if quantity.of_gas:
+        found |= {
+            "gas": Choice(GASES, forgiving=True, required=True, metadata={"description": "the gas"}),
+            "water": Choice(WATERS, metadata={"description": "the kind of water; never guessed"}),
+        }
     for family in quantity_families(quantity):
         about = {"description": family.meaning}
         if family.name == TRANSFER_FAMILY:

@@ -6,6 +6,7 @@ import secrets
 from collections.abc import Callable
 
 from flask import Flask, Response, g, request
+from werkzeug.exceptions import NotFound
 
 from service import errors
 from service.catalogue import install as install_catalogue
@@ -60,11 +61,24 @@ def _begin(config: Config) -> Callable[[], Response | None]:
         if len(request.query_string) > QUERY_BYTES:
             reason = f"is {len(request.query_string)} bytes long, over the limit: send the values in the body of a POST"
             raise Refused(Fault("too_large", "query", reason, f"{QUERY_BYTES} bytes"), status=414)
+        _check_encoding()
+        if "//" in request.environ.get("PATH_INFO", ""):  # the router forgives it at the start
+            raise NotFound
         if config.token and request.path.startswith(GUARDED) and not _knows(config.token):
             return errors.unauthorised()
         return None
 
     return begin
+
+
+def _check_encoding() -> None:
+    """Refuse a query that is not UTF-8, which could not even be asked how errors are wanted."""
+    try:
+        request.query_string.decode()
+    except UnicodeDecodeError as error:
+        request.query_string = request.query_string.decode(errors="replace").encode()
+        reason = "is not UTF-8: write characters beyond ASCII as in %C2%B0C"
+        raise Refused(Fault("unreadable", "query", reason), status=400) from error
 
 
 def _empty() -> Response:

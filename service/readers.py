@@ -9,7 +9,9 @@ from urllib.parse import parse_qsl
 
 import orjson
 from flask import Request
+from gunicorn.http.errors import ParseException
 from werkzeug.datastructures import MultiDict
+from werkzeug.exceptions import ClientDisconnected
 
 from schemas.samples import Text
 from service.config import Config
@@ -105,8 +107,9 @@ def _body(request: Request, config: Config) -> bytes:
         raise _too_large(announced, limit)
     try:
         body = request.get_data(cache=True, parse_form_data=False)
-    except OSError as error:  # a chunk that is none, or a connection that ended
-        reason = "could not be read to its end: it was cut short, or its chunks are wrong"
+    except (OSError, ParseException, ClientDisconnected) as error:
+        told = f": {announced} bytes were announced" if announced is not None else ", or its chunks are wrong"
+        reason = f"could not be read to its end: it was cut short{told}"
         raise Refused(Fault("cut_short", "body", reason), status=400) from error
     if len(body) > limit:
         raise _too_large(len(body), limit)

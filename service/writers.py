@@ -92,7 +92,7 @@ def json_bytes(answer: Answer, detail: str = "full", asked: Asked | None = None)
     question = answer.question
     document: dict[str, Any] = {
         "quantity": question.quantity.name,
-        "gas": question.gas.name,
+        **({"gas": question.gas.name} if question.quantity.of_gas else {}),
         "samples": answer.samples,
     }
     document |= _outcome(question, answer.outcome, answer.spread)

@@ -9,7 +9,7 @@ DUCE_INTERCEPT = 770.0  # 1; Duce et al. (1991), from memory
 DUCE_SLOPE = 45.0  # (g mol-1)^(-1/3); Duce et al. (1991), from memory
 CM_PER_HOUR = 3.6e5  # cm h-1 in one m s-1
 
-same_as("total_transfer_velocity", "transfer_velocity", method="none")
+same_as("total_transfer_velocity", "enhanced_transfer_velocity", method="none")
 
 
 @step(
@@ -46,13 +46,13 @@ def duce_1991(wind_speed_10m: Array, molar_mass: Array) -> Array:
     formula="1/K = 1/k_w + L/k_a",
 )
 def total_transfer_velocity(
-    transfer_velocity: Array, air_side_transfer_velocity: Array, ostwald_coefficient: Array
+    enhanced_transfer_velocity: Array, air_side_transfer_velocity: Array, ostwald_coefficient: Array
 ) -> Array:
     """Return the transfer velocity with the resistances of water and air in series.
 
     Parameters
     ----------
-    transfer_velocity : (...) array
+    enhanced_transfer_velocity : (...) array
         On the water side. [cm h-1]
     air_side_transfer_velocity : (...) array
         [cm h-1]
@@ -68,6 +68,6 @@ def total_transfer_velocity(
     ----------
     Duce et al. (1991). doi:10.1029/91GB01778
     """
-    k_w, k_a, L = transfer_velocity, air_side_transfer_velocity, ostwald_coefficient
+    k_w, k_a, L = enhanced_transfer_velocity, air_side_transfer_velocity, ostwald_coefficient
     both = k_a + L * k_w
     return np.where(both > 0.0, k_w * k_a / np.where(both > 0.0, both, 1.0), 0.0 * both)

@@ -51,7 +51,7 @@ KINDS: Mapping[str, str] = {
 }
 PUBLISHED = ("paper", "standard", "handbook", "worked example")
 OPTIONS = ("gas", "water", "mass_as")  # what a caller may say beside inputs and methods
-CHOICES = (GIVEN, "none", "upward", "downward")  # members of families that are no published methods
+CHOICES = (GIVEN, "none", "upward", "downward", "linear", "nonlinear")  # members of families that are no published methods
 Cell = TypeVar("Cell")
 
 

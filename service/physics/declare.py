@@ -2,7 +2,7 @@
 
 import inspect
 from collections.abc import Callable, Mapping, Sequence
-from dataclasses import dataclass, field
+from dataclasses import dataclass, field, replace
 from types import MappingProxyType
 from typing import Any, Literal, TypeVar
 
@@ -87,7 +87,7 @@ class Term:
     no_default_for_water: tuple[str, ...] = ()
     standard_name: str | None = None
     scale: float = 1.0
-    holds: Literal["sample", "request"] = "sample"
+    holds: Literal["sample", "request", "series", "course"] = "sample"
     per_litre: str | None = None
     dimension: str | None = None
     example: float | None = None
@@ -232,6 +232,8 @@ class Quantity:
     needs_side: Mapping[str, str] = field(default_factory=dict)
     units: Mapping[str, str] = field(default_factory=dict)
     of_gas: bool = True
+    series: bool = False  # the answer to a sample depends on those before it
+    summaries: tuple[str, ...] = ()  # results of which a mean and an integral over time are told
 
 
 TERMS: dict[str, Term] = {}
@@ -315,7 +317,9 @@ def averaging(kind: str, *remarks: Remark) -> None:
 
 
 def gas(record: Gas) -> Gas:
-    """File a gas."""
+    """File a gas; its molar mass is one of its constants."""
+    constants = {"molar_mass": record.molar_mass, **record.constants}
+    record = replace(record, constants=constants)
     _file(GASES, record.name, record)
     return record
 

@@ -5,16 +5,21 @@ from pkgutil import iter_modules
 from types import ModuleType
 
 import service.physics.air_side
+import service.physics.enhancement
 import service.physics.equilibration
 import service.physics.equilibrator
 import service.physics.flux
 import service.physics.instrument_terms
 import service.physics.interface
 import service.physics.seawater
+import service.physics.series_terms
 import service.physics.sides
 import service.physics.terms
 import service.physics.transfer_terms
+import service.physics.true_wind
+import service.physics.turnover
 import service.physics.wind
+import service.physics.wind_memory
 import service.physics.wind_moments
 import service.physics.wind_profiles  # noqa: F401  imported for what they declare
 from service.physics import carbonate, gases, schmidt_number, solubility, transfer_velocity
@@ -103,6 +108,7 @@ FLUX = quantity(
         needs_side={"wind_speed_10m": "wind_speed"},
         sides=("water_side", "air_side"),
         units={"solubility": "mol L-1 atm-1"},
+        summaries=("flux", "evasion", "invasion"),
     )
 )
 
@@ -116,7 +122,43 @@ EQUILIBRATION = quantity(
             "time_to_fraction",
             "storage_ratio",
             "transfer_velocity",
+            "disequilibrium",
         ),
-        more=("total_transfer_velocity", "schmidt_number", "wind_speed_10m", "revelle_factor"),
+        more=(
+            "equilibration_rate",
+            "turnover_one_way",
+            "turnover_net",
+            "gas_stock",
+            "total_transfer_velocity",
+            "schmidt_number",
+            "wind_speed_10m",
+            "revelle_factor",
+        ),
+        needs_side={"disequilibrium": "course"},
+    )
+)
+
+WIND_MEMORY = quantity(
+    Quantity(
+        "wind-memory",
+        "Transfer velocity that the gas in a mixed layer remembers, from a series of winds",
+        results=("weighted_transfer_velocity", "ventilated_fraction"),
+        more=("memory_length", "transfer_velocity", "total_transfer_velocity", "schmidt_number", "wind_speed_10m"),
+        series=True,
+    )
+)
+
+TRUE_WIND = quantity(
+    Quantity(
+        "true-wind",
+        "True wind from the wind felt on a moving ship",
+        results=("true_wind_speed", "true_wind_direction"),
+        more=(
+            "true_wind_eastward",
+            "true_wind_northward",
+            "wind_speed_over_water",
+            "wind_direction_over_water",
+        ),
+        of_gas=False,
     )
 )

@@ -66,33 +66,6 @@ for _way in ("air_mole_fraction", "air_mole_fraction_wet"):
     step("partial_pressure_in_air", way=_way, formula="p = x (P - p_w)")(partial_pressure_in_air)
 
 
-derived(
-    "fugacity_coefficient_at_air_fugacity",
-    of="fugacity_coefficient",
-    partial_pressure_in_air="air_fugacity",
-    water_temperature="skin_temperature",
-)
-
-
-@step("partial_pressure_in_air", way="air_fugacity", formula="p = f / phi")
-def partial_pressure_from_fugacity(air_fugacity: Array, fugacity_coefficient_at_air_fugacity: Array) -> Array:
-    """Return the partial pressure at the interface from the fugacity there, for what bubbles carry down.
-
-    Parameters
-    ----------
-    air_fugacity : (...) array
-        [uatm]
-    fugacity_coefficient_at_air_fugacity : (...) array
-        Taken where the partial pressure equals the fugacity; the error is of the second order. [1]
-
-    Returns
-    -------
-    (...) array
-        [uatm]
-    """
-    return air_fugacity / fugacity_coefficient_at_air_fugacity
-
-
 @step("fugacity_in_air", formula="f = p phi")
 def fugacity_in_air(partial_pressure_in_air: Array, fugacity_coefficient_at_interface: Array) -> Array:
     """Return the fugacity in the air at the interface.

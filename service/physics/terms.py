@@ -173,7 +173,7 @@ input_term(
     default=0.5,
     used_with=(
         *("given_transfer_velocity_600", "given_transfer_velocity_660"),
-        *(f"own_coefficient_{power}" for power in range(4)),
+        *("own_constant", "own_linear_coefficient", "own_quadratic_coefficient", "own_cubic_coefficient"),
     ),
 )
 input_term(

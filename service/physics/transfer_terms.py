@@ -67,7 +67,7 @@ input_term(
     example=1.2,
 )
 
-OWN = tuple(f"own_coefficient_{power}" for power in range(4))
+OWN = ("own_constant", "own_linear_coefficient", "own_quadratic_coefficient", "own_cubic_coefficient")
 for _name, _meaning in zip(
     OWN,
     (
@@ -105,6 +105,7 @@ term(
     "supersaturation that bubbles sustain where nothing else moves the gas",
     of_gas=True,
 )
+term("partial_pressure_in_bubbles", "uatm", "partial pressure of the gas in the air that bubbles carry", of_gas=True)
 term("fugacity_coefficient_at_air_fugacity", "1", "fugacity over partial pressure where the fugacity is known")
 
 side("wind_spread", ("wind_speed_variance", "weibull_shape"), "the spread of the wind")

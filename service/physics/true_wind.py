@@ -138,7 +138,7 @@ def smith_1999(
 
     References
     ----------
-    Smith, Bourassa and Sharp (1999). doi:10.1175/1520-0426(1999)016<0939:ETWIAW>2.0.CO;2
+    Smith, Bourassa and Sharp (1999). doi:10.1175/1520-0426(1999)016<0939:EMTITW>2.0.CO;2
     """
     whence = np.radians(heading + anemometer_zero_line + apparent_wind_direction)
     course = np.radians(course_over_ground)

@@ -141,12 +141,14 @@ _dimension("speed_variance", "m2 s-2", ("kn2 mph2",), ("m2 cm2 km2 ft2", "s-2 h-
 _dimension("length", "m", (_LENGTH,))
 _dimension("area", "m2", ("m2 km2 cm2 ha",))
 _dimension("time", "d", ("d h min s month yr",))
+_dimension("rate", "d-1", (f"{_CLOCK} month-1 yr-1",))
 _dimension("angle", "degree", ("degree rad",))
 _dimension("dimensionless", "1", ("1 %",), ("m", "m-1 km-1"), ("m3", "m-3"), ("L", "L-1"), ("mL", "mL-1"))
 _dimension("salinity", "1", ("1 psu",))  # no percent: practical salinity is a scale without hundredths
 _dimension("mole_fraction", "umol mol-1", (_MOLES, "mol-1"), ("% 1",))
 _dimension("volumetric_flow", "m3 s-1", ("m3 L ft3", _CLOCK))
 _dimension("diffusivity", "m2 s-1", ("m2 cm2 mm2", _CLOCK))
+_dimension("ion_product", "mol2 kg-2", ("mol2", "kg-2"))
 _dimension("density", "kg m-3", ("kg g", "m-3 L-1"), ("g", "cm-3 mL-1"))
 for _kind, _words in _KINDS.items():
     _suffix, _first = ("", "") if _kind == "amount" else (f"_as_{_kind}", _words.split()[0])

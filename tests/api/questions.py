@@ -1,4 +1,4 @@
-"""The questions that these tests ask, one for each quantity, and how they read the answers; the numbers are invented."""
+"""The questions that these tests ask, their numbers invented, and how they read the answers."""
 
 import csv
 import io

@@ -6,9 +6,22 @@ import pytest
 from flask.testing import FlaskClient
 from werkzeug.test import TestResponse
 
-from schemas.vocabulary import quantity_inputs
+from schemas.vocabulary import request_fields
 from service.physics.declare import QUANTITIES
-from tests.api.questions import FLUX, PER_SAMPLE, ROWS, body, faults, flux, number, problem, quality, rows, table, values
+from tests.api.questions import (
+    FLUX,
+    PER_SAMPLE,
+    ROWS,
+    body,
+    faults,
+    flux,
+    number,
+    problem,
+    quality,
+    rows,
+    table,
+    values,
+)
 
 ADDED = [
     "flux [mmol m-2 d-1]",
@@ -153,7 +166,16 @@ def test_a_reference_without_a_table_says_so(client: FlaskClient) -> None:
     assert "no CSV" in told["detail"]
 
 
-NEAR_MISSES = ["Wind_Speed", "wind speed", "wind-speed", "WIND_SPEED", "windspeed", "wind_sped", "wind_spede", "wind_speeed"]
+NEAR_MISSES = [
+    "Wind_Speed",
+    "wind speed",
+    "wind-speed",
+    "WIND_SPEED",
+    "windspeed",
+    "wind_sped",
+    "wind_spede",
+    "wind_speeed",
+]
 
 
 @pytest.mark.parametrize("header", NEAR_MISSES)
@@ -287,9 +309,9 @@ def test_a_column_that_would_change_numbers_is_never_ignored_unasked(client: Fla
     content = table([[*row, "1"] for row in ROWS], [*PER_SAMPLE, header])
     answer = ask(client, content)
 
-    if header not in quantity_inputs(QUANTITIES["flux"]):
+    if header not in request_fields(QUANTITIES["flux"]):
         assert faults(answer) == [("unknown_name", header)]
-        assert flags(ask(client, content, f"&ignore={header}")) == ["1", "1"]
+    assert flags(ask(client, content, f"&ignore={header}")) == ["1", "1"]
 
 
 def test_a_file_with_decimal_commas_is_read_where_they_are_announced(client: FlaskClient) -> None:
@@ -403,8 +425,8 @@ def test_a_table_may_be_answered_with_json_or_numbers(client: FlaskClient) -> No
 
     assert values(as_json, "flux") == [first, None]
     assert quality(as_json)[1][0] == 4
-    assert [float(line) for line in as_numbers.text.split("\n")][0] == first
-    assert as_numbers.text.split("\n")[1] == "NaN"
+    assert [float(line) for line in as_numbers.text.split("\n")[:1]] == [first]
+    assert as_numbers.text.split("\n")[1:] == ["NaN"]
 
 
 def test_a_query_and_json_may_be_answered_with_a_table(client: FlaskClient) -> None:
@@ -417,7 +439,7 @@ def test_a_query_and_json_may_be_answered_with_a_table(client: FlaskClient) -> N
 
 
 def test_accept_changes_the_form_only_where_it_excludes_the_own_one(client: FlaskClient) -> None:
-    def kind(accept: str) -> str:
+    def kind(accept: str) -> str | None:
         return client.post("/v1/flux?gas=co2", data=table(), headers={"Accept": accept}).mimetype
 
     assert kind("*/*") == "text/csv"
@@ -445,7 +467,9 @@ def test_strict_refuses_a_table_for_its_bad_rows_by_line_and_counts_them(client:
     told = problem(ask(client, content, "&strict=1"))
 
     assert told["detail"].startswith("30 of 20031 samples have no result")
-    assert [(error["sample"], error["line"]) for error in told["errors"]] == [(20_001 + i, 20_002 + i) for i in range(20)]
+    assert [(error["sample"], error["line"]) for error in told["errors"]] == [
+        (20_001 + i, 20_002 + i) for i in range(20)
+    ]
     assert told["more"] == 10
     assert problem(ask(client, content, "&strict=1&form=json"))["errors"] == told["errors"]
     assert ask(client, table(), "&strict=1").data == ask(client, table()).data

@@ -134,9 +134,9 @@ def test_several_parameterisations_give_their_mean_and_spread(client: FlaskClien
 def test_an_array_of_parameterisations_is_the_same_as_one_with_semicolons(client: FlaskClient) -> None:
     names = ["ho-2006", "wanninkhof-2014"]
 
-    assert client.post("/v1/flux", data=body(parameterisation=names)).data == client.get(
-        flux(parameterisation=names)
-    ).data
+    assert (
+        client.post("/v1/flux", data=body(parameterisation=names)).data == client.get(flux(parameterisation=names)).data
+    )
 
 
 def test_one_parameterisation_that_fails_leaves_the_mean_to_the_others(client: FlaskClient) -> None:

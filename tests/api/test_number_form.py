@@ -81,9 +81,7 @@ def test_one_sample_is_one_number_without_newline_or_unit(client: FlaskClient) -
 def test_several_samples_are_one_number_a_line_in_order(client: FlaskClient) -> None:
     lines = client.get(flux(form="number", wind_speed="7;8;9")).text.split("\n")
 
-    assert [float(line) for line in lines] == [
-        number(client.get(flux(wind_speed=wind)), "flux") for wind in (7, 8, 9)
-    ]
+    assert [float(line) for line in lines] == [number(client.get(flux(wind_speed=wind)), "flux") for wind in (7, 8, 9)]
 
 
 def test_the_number_is_of_the_first_picked_result_in_its_unit(client: FlaskClient) -> None:

@@ -49,7 +49,9 @@ def test_ones_own_k_comes_back_at_its_schmidt_number(client: FlaskClient, given:
 
 def test_ones_own_k_is_scaled_by_the_exponent_that_is_sent(client: FlaskClient) -> None:
     inputs = {"gas": "co2", "water_temperature": 20, "salinity": 35, "given_transfer_velocity_600": 12.5}
-    answer = client.get(address("transfer-velocity", inputs, pick="transfer_velocity;schmidt_number", schmidt_exponent=0.67))
+    answer = client.get(
+        address("transfer-velocity", inputs, pick="transfer_velocity;schmidt_number", schmidt_exponent=0.67)
+    )
     schmidt = number(answer, "schmidt_number")
 
     assert number(answer, "transfer_velocity") == pytest.approx(12.5 * (schmidt / 600) ** -0.67, rel=1e-14)

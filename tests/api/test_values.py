@@ -45,7 +45,18 @@ def test_a_missing_mark_in_a_query_is_a_missing_sample(client: FlaskClient, text
     assert quality(answer) == [(9, ["wind_speed is missing"])]
 
 
-MISSING_VALUES = [None, "NA", "NaN", "nan", "null", "", [None], ["NA"], {"values": None}, {"values": ["NaN"], "unit": "kn"}]
+MISSING_VALUES = [
+    None,
+    "NA",
+    "NaN",
+    "nan",
+    "null",
+    "",
+    [None],
+    ["NA"],
+    {"values": None},
+    {"values": ["NaN"], "unit": "kn"},
+]
 
 
 @pytest.mark.parametrize("value", MISSING_VALUES, ids=str)
@@ -217,7 +228,7 @@ def test_an_unknown_gas_is_refused_with_those_known(client: FlaskClient, gas: st
 
 
 # In JSON, what stands once for the request is one word, or 0 and 1 as numbers.
-WRONG_OPTIONS = [
+WRONG_OPTIONS: list[tuple[str, Any]] = [
     ("gas", ["co2"]),
     ("gas", None),
     ("water", 5),
@@ -243,7 +254,9 @@ def test_an_option_that_is_no_word_is_refused(client: FlaskClient, name: str, va
 @pytest.mark.parametrize("value", ["1", 1])
 def test_a_switch_in_json_is_text_or_number(client: FlaskClient, value: Any) -> None:
     assert client.post("/v1/flux", data=body(strict=value)).status_code == 200
-    assert problem(client.post("/v1/flux", data=body(strict=value, wind_speed=None)))["errors"][0]["code"] == "bad_sample"
+    assert (
+        problem(client.post("/v1/flux", data=body(strict=value, wind_speed=None)))["errors"][0]["code"] == "bad_sample"
+    )
 
 
 EMPTY_OPTIONS = ["parameterisation", "pick", "water", "strict", "positive"]

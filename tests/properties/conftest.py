@@ -7,7 +7,7 @@ settings.register_profile(
     derandomize=True,
     deadline=None,  # a busy machine is no fault of the code
     database=None,
-    max_examples=15,  # each of them an array of many samples
+    max_examples=10,  # each of them an array of many samples
     suppress_health_check=[HealthCheck.too_slow],
 )
 settings.load_profile("the same every time")

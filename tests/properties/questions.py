@@ -94,7 +94,9 @@ def compute(wanted: str | Iterable[str], chosen: Mapping[str, str], gas: str, va
     """Return terms by the methods chosen, from the values given and typical ones for all else that is needed."""
     names = (wanted,) if isinstance(wanted, str) else tuple(wanted)
     steps = sufficient(names, tuple(sorted(chosen.items())), gas, tuple(sorted(values)))
-    inputs = {name: np.atleast_1d(np.asarray(values.get(name, typical(name)), float)) for name in steps.leaves}
+    needed = [name for name in steps.leaves if name not in steps.defaults]
+    all_values = {name: values[name] if name in values else typical(name) for name in needed}
+    inputs = {name: np.atleast_1d(np.asarray(value, float)) for name, value in all_values.items()}
     known = run(steps, inputs)
     return {name: known[steps.keys[name]] for name in names}
 

@@ -20,7 +20,7 @@ def _ionic_strength(salinity: Array) -> Array:
 
 
 def _per_solution(salinity: Array) -> Array:
-    """Return ln of kilograms of water in a kilogram of solution, which turns a constant per water into one per solution."""
+    """Return ln of the kilograms of water in a kilogram of solution: from a constant per water to one per solution."""
     return np.log1p(-0.001005 * salinity)
 
 
@@ -42,7 +42,7 @@ def lee_2010(salinity: Array) -> Array:
     -----
     The default: 139 samples of the open sea against the 20 of Uppstrom (1974), and the ratio that synthesis products
     now use. It is 4 percent higher; from alkalinity and total carbon in surface sea water that makes the fugacity
-    higher by 1.0 to 1.5 percent. NaN in, NaN out.
+    higher by about 1.5 percent. NaN in, NaN out.
 
     References
     ----------

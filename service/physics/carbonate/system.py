@@ -1,4 +1,4 @@
-"""The carbonate system solved for its hydrogen ion: from total carbon to fugacity, and from fugacity to total carbon."""
+"""The carbonate system solved for its hydrogen ion: from total carbon to fugacity, and from that to total carbon."""
 
 import numpy as np
 from numpy.typing import NDArray
@@ -231,7 +231,9 @@ def carbon_per_dioxide(hydrogen: Array, K1: Array, K2: Array) -> Array:
 @step(
     "fugacity_by_carbon",
     formula="f = DIC / (K0 (1 + K1/[H+] + K1 K2/[H+]^2))",
-    remarks=(Remark(UNSOLVED, ("hydrogen_ion_by_carbon", "alkalinity", "carbonate_carbon", "solubility"), no_number, 4),),
+    remarks=(
+        Remark(UNSOLVED, ("hydrogen_ion_by_carbon", "alkalinity", "carbonate_carbon", "solubility"), no_number, 4),
+    ),
 )
 def fugacity_by_carbon(
     carbonate_carbon: Array,

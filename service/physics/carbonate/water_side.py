@@ -1,4 +1,4 @@
-"""What alkalinity tells beside carbon, pH or a fugacity: the carbon dioxide of the water, and how much carbon it stores."""
+"""What alkalinity tells beside carbon, pH or a fugacity: the carbon dioxide of a water, and how much it stores."""
 
 import numpy as np
 
@@ -62,12 +62,12 @@ def fugacity_from_ph(
 
 
 # The hydrogen ion, from whatever is given.
-same_as("hydrogen_ion", "hydrogen_ion_of_water_side", in_situ=True)
+same_as("hydrogen_ion", "hydrogen_ion_of_water_side", gases=CO2, in_situ=True)
 for _way in CARBON_WAYS:
-    same_as("hydrogen_ion", "hydrogen_ion_of_pair", way=_way, beside=BESIDE, in_situ=True)
+    same_as("hydrogen_ion", "hydrogen_ion_of_pair", way=_way, beside=BESIDE, gases=CO2, in_situ=True)
 
 
-@step("hydrogen_ion", way="ph", formula="10^-pH", in_situ=True)
+@step("hydrogen_ion", way="ph", gases=CO2, formula="10^-pH", in_situ=True)
 def hydrogen_ion_from_ph(ph: Array) -> Array:
     """Return the hydrogen ion from the pH.
 
@@ -111,9 +111,13 @@ def hydrogen_ion_from_carbon(
 
 
 for _way in CARBON_WAYS:
-    step("hydrogen_ion", way=_way, formula="DIC / [CO2*] = 1 + K1/[H+] + K1 K2/[H+]^2, solved for [H+]", in_situ=True)(
-        hydrogen_ion_from_carbon
-    )
+    step(
+        "hydrogen_ion",
+        way=_way,
+        gases=CO2,
+        formula="DIC / [CO2*] = 1 + K1/[H+] + K1 K2/[H+]^2, solved for [H+]",
+        in_situ=True,
+    )(hydrogen_ion_from_carbon)
 
 
 @step(

@@ -51,6 +51,7 @@ def liss_merlivat_1986(wind_speed_10m: Array) -> tuple[Array, Array]:
     References
     ----------
     Liss and Merlivat (1986), in The Role of Air-Sea Exchange in Geochemical Cycling, pp. 113-127.
+    doi:10.1007/978-94-009-4738-2_5
     """
     smooth, breaking = LISS_MERLIVAT_LIMITS
     k = np.where(

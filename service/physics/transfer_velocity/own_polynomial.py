@@ -5,14 +5,14 @@ from service.physics.transfer_velocity.reference import REFERENCE
 from service.physics.transfer_velocity.scaling import set_negative_to_zero
 
 METHOD = "own-polynomial"
-COEFFICIENTS = ("own_coefficient_0", "own_coefficient_1", "own_coefficient_2", "own_coefficient_3")
+COEFFICIENTS = ("own_constant", "own_linear_coefficient", "own_quadratic_coefficient", "own_cubic_coefficient")
 
 
 def own_polynomial(
-    own_coefficient_0: Array,
-    own_coefficient_1: Array,
-    own_coefficient_2: Array,
-    own_coefficient_3: Array,
+    own_constant: Array,
+    own_linear_coefficient: Array,
+    own_quadratic_coefficient: Array,
+    own_cubic_coefficient: Array,
     wind_speed_10m: Array,
     wind_speed_10m_second_moment: Array,
     wind_speed_10m_third_moment: Array,
@@ -21,13 +21,13 @@ def own_polynomial(
 
     Parameters
     ----------
-    own_coefficient_0 : (...) array
+    own_constant : (...) array
         The constant. [cm h-1]
-    own_coefficient_1 : (...) array
+    own_linear_coefficient : (...) array
         With the mean wind speed in m s-1. [cm h-1]
-    own_coefficient_2 : (...) array
+    own_quadratic_coefficient : (...) array
         With its mean square. [cm h-1]
-    own_coefficient_3 : (...) array
+    own_cubic_coefficient : (...) array
         With its mean cube. [cm h-1]
     wind_speed_10m : (...) array
         [m s-1]
@@ -45,9 +45,9 @@ def own_polynomial(
     -----
     ``k = c0 + c1 <U> + c2 <U^2> + c3 <U^3>``; without a variance or a Weibull shape the moments are powers of U.
     """
-    linear = own_coefficient_0 + own_coefficient_1 * wind_speed_10m
-    quadratic = own_coefficient_2 * wind_speed_10m_second_moment
-    return linear + quadratic + own_coefficient_3 * wind_speed_10m_third_moment
+    linear = own_constant + own_linear_coefficient * wind_speed_10m
+    quadratic = own_quadratic_coefficient * wind_speed_10m_second_moment
+    return linear + quadratic + own_cubic_coefficient * wind_speed_10m_third_moment
 
 
 for _name in COEFFICIENTS:  # any one of them makes the method; the others are then 0

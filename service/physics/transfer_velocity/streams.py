@@ -31,7 +31,7 @@ RAYMOND_2012_1 = (5037.0, 0.89, 0.54)  # leading coefficient [m d-1], exponents 
     water=("stream",),
     variant_of="raymond-2012-5",
 )
-def raymond_2012_1(flow_velocity: Array, slope: Array, water_depth: Array) -> Array:
+def raymond_2012_one(flow_velocity: Array, slope: Array, water_depth: Array) -> Array:
     """Return the transfer velocity of a stream by model 1 of Raymond et al. (2012): stream power and depth.
 
     Parameters
@@ -75,7 +75,7 @@ RAYMOND_2012_2 = (5937.0, 2.54, 0.89, 0.58)  # leading coefficient [m d-1], that
     water=("stream",),
     variant_of="raymond-2012-5",
 )
-def raymond_2012_2(flow_velocity: Array, slope: Array, water_depth: Array) -> Array:
+def raymond_2012_two(flow_velocity: Array, slope: Array, water_depth: Array) -> Array:
     """Return the transfer velocity of a stream by model 2 of Raymond et al. (2012), with the Froude number.
 
     Parameters
@@ -122,7 +122,7 @@ RAYMOND_2012_3 = (1162.0, 0.77, 0.85)  # leading coefficient [m d-1], exponents 
     water=("stream",),
     variant_of="raymond-2012-5",
 )
-def raymond_2012_3(flow_velocity: Array, slope: Array) -> Array:
+def raymond_2012_three(flow_velocity: Array, slope: Array) -> Array:
     """Return the transfer velocity of a stream by model 3 of Raymond et al. (2012): slope and velocity.
 
     Parameters
@@ -164,7 +164,7 @@ RAYMOND_2012_4 = (951.5, 0.76)  # leading coefficient [m d-1], exponent of V S
     water=("stream",),
     variant_of="raymond-2012-5",
 )
-def raymond_2012_4(flow_velocity: Array, slope: Array) -> Array:
+def raymond_2012_four(flow_velocity: Array, slope: Array) -> Array:
     """Return the transfer velocity of a stream by model 4 of Raymond et al. (2012): a power of stream power.
 
     Parameters
@@ -205,7 +205,7 @@ RAYMOND_2012_5 = (2.02, 2841.0)  # constant [m d-1] and slope with V S
     water=("stream",),
     note="Standard errors of the coefficients: 107 and 0.209. The one of the seven that needs least.",
 )
-def raymond_2012_5(flow_velocity: Array, slope: Array) -> Array:
+def raymond_2012_five(flow_velocity: Array, slope: Array) -> Array:
     """Return the transfer velocity of a stream by model 5 of Raymond et al. (2012): stream power, linear.
 
     Parameters
@@ -246,7 +246,7 @@ RAYMOND_2012_6 = (929.0, 0.75, 0.011)  # leading coefficient [m d-1], exponents 
     water=("stream",),
     variant_of="raymond-2012-5",
 )
-def raymond_2012_6(flow_velocity: Array, slope: Array, discharge: Array) -> Array:
+def raymond_2012_six(flow_velocity: Array, slope: Array, discharge: Array) -> Array:
     """Return the transfer velocity of a stream by model 6 of Raymond et al. (2012): stream power and discharge.
 
     Parameters
@@ -290,7 +290,7 @@ RAYMOND_2012_7 = (4725.0, 0.86, -0.14, 0.66)  # leading coefficient [m d-1], exp
     water=("stream",),
     variant_of="raymond-2012-5",
 )
-def raymond_2012_7(flow_velocity: Array, slope: Array, water_depth: Array, discharge: Array) -> Array:
+def raymond_2012_seven(flow_velocity: Array, slope: Array, water_depth: Array, discharge: Array) -> Array:
     """Return the transfer velocity of a stream by model 7 of Raymond et al. (2012): stream power, discharge and depth.
 
     Parameters

@@ -4,7 +4,7 @@ import numpy as np
 
 from service.physics import sources
 from service.physics.constants import AIR_DENSITY, METRES_PER_DAY
-from service.physics.declare import Array, step
+from service.physics.declare import Array, derived, same_as, step
 
 MICRO = 1.0e-6
 MMOL_PER_LITRE_ATMOSPHERE = 1.0e6  # mmol m-3 in one mol L-1
@@ -33,14 +33,43 @@ def friction_velocity_water(friction_velocity_air: Array, density: Array) -> Arr
     return friction_velocity_air * np.sqrt(AIR_DENSITY / density)
 
 
-def bubble_injection(bubble_injection_per_atmosphere: Array, partial_pressure_in_air: Array) -> Array:
+# In bubbles it is the partial pressure that counts; where the fugacity is sent, that is had from it.
+same_as("partial_pressure_in_bubbles", "partial_pressure_in_air")
+derived(
+    "fugacity_coefficient_at_air_fugacity",
+    of="fugacity_coefficient",
+    partial_pressure_in_air="air_fugacity",
+    water_temperature="skin_temperature",
+)
+
+
+@step("partial_pressure_in_bubbles", way="air_fugacity", formula="p = f / phi")
+def partial_pressure_in_bubbles(air_fugacity: Array, fugacity_coefficient_at_air_fugacity: Array) -> Array:
+    """Return the partial pressure of the gas in the air from its fugacity there.
+
+    Parameters
+    ----------
+    air_fugacity : (...) array
+        [uatm]
+    fugacity_coefficient_at_air_fugacity : (...) array
+        Taken where the partial pressure equals the fugacity; the error is of the second order. [1]
+
+    Returns
+    -------
+    (...) array
+        [uatm]
+    """
+    return air_fugacity / fugacity_coefficient_at_air_fugacity
+
+
+def bubble_injection(bubble_injection_per_atmosphere: Array, partial_pressure_in_bubbles: Array) -> Array:
     """Return what bubbles carry into open water whatever the concentration there.
 
     Parameters
     ----------
     bubble_injection_per_atmosphere : (...) array
         [mmol m-2 d-1 atm-1]
-    partial_pressure_in_air : (...) array
+    partial_pressure_in_bubbles : (...) array
         x (P - p_w). [uatm]
 
     Returns
@@ -48,7 +77,7 @@ def bubble_injection(bubble_injection_per_atmosphere: Array, partial_pressure_in
     (...) array
         [mmol m-2 d-1]
     """
-    return bubble_injection_per_atmosphere * (MICRO * partial_pressure_in_air)
+    return bubble_injection_per_atmosphere * (MICRO * partial_pressure_in_bubbles)
 
 
 for _method in ("liang-2013", "emerson-2019", "stanley-2009"):
