@@ -21,6 +21,15 @@ class Input:
 
 
 @dataclass(frozen=True, slots=True)
+class SeriesAsked:
+    """What is asked of a summary: the times, the area, and the inputs whose error all samples share."""
+
+    time: Input
+    area: float | None
+    common: frozenset[str]
+
+
+@dataclass(frozen=True, slots=True)
 class Request:
     """A checked request: the question, its inputs, and how the answer is to be written."""
 
@@ -30,3 +39,4 @@ class Request:
     options: Mapping[str, Any]
     doubts: tuple[Input, ...] = ()
     correlations: Mapping[tuple[str, str], float] = field(default_factory=dict)
+    series: SeriesAsked | None = None

@@ -8,6 +8,7 @@ from urllib.parse import quote, urlencode
 
 from schemas.needs import enough, two_parameterisations, usual_gases
 from schemas.parameters import number_text
+from schemas.series import PER_SAMPLE
 from schemas.vocabulary import request_fields
 from service.physics.declare import TERMS, Gas, Quantity, Term
 
@@ -33,7 +34,7 @@ def _second(term: Term) -> float:
 
 
 def _both(term: Term) -> tuple[float, ...]:
-    return (_first(term), _second(term)) if term.holds == "sample" else (_first(term),)
+    return (_first(term), _second(term)) if term.holds in PER_SAMPLE else (_first(term),)
 
 
 def _query(pairs: Iterable[tuple[str, str]]) -> str:
@@ -95,8 +96,8 @@ def _examples(quantity: Quantity, gas: Gas, inputs: list[Term]) -> Iterable[Exam
             **{term.name: {"values": list(_both(term)), "unit": term.unit} for term in inputs[-1:]},
         },
     )
-    once = [(term.name, number_text(_first(term))) for term in inputs if term.holds != "sample"]
-    columns = [term for term in inputs if term.holds == "sample"]
+    once = [(term.name, number_text(_first(term))) for term in inputs if term.holds not in PER_SAMPLE]
+    columns = [term for term in inputs if term.holds in PER_SAMPLE]
     yield post("csv", "a table, answered as a table", "text/csv", _table(columns), [*named, *once])
     yield post("form", "one sample, as a form", "application/x-www-form-urlencoded", _query(one))
 

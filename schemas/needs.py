@@ -107,10 +107,10 @@ def quantity_needs(quantity: Quantity) -> list[dict[str, Any]]:
     told: list[dict[str, Any]] = []
     for name in quantity_inputs(quantity):
         missing = [way for way in ways if name in way.plan.missing]
-        if name in sides:
-            told.append({"name": name, "needed": "one_of_side", "side": sides[name]})
-        elif missing and len(missing) == len(ways):
+        if missing and len(missing) == len(ways):
             told.append({"name": name, "needed": "always"})
+        elif name in sides:
+            told.append({"name": name, "needed": "one_of_side", "side": sides[name]})
         elif methods := _by_option(missing):
             told.append({"name": name, "needed": "by_method", "methods": methods})
         elif name in brings:
@@ -160,7 +160,8 @@ def quantity_sides(quantity: Quantity) -> list[dict[str, Any]]:
         ``beside``, the input without which a member tells nothing; ``gases_by_member``, where not every gas has it.
     """
     inputs = set(quantity_inputs(quantity))
-    return [_side(quantity, side) for side in SIDES.values() if inputs & set(side.members)]
+    always = {each["name"] for each in quantity_needs(quantity) if each["needed"] == "always"}
+    return [_side(quantity, side) for side in SIDES.values() if (inputs - always) & set(side.members)]
 
 
 def _side(quantity: Quantity, side: Side) -> dict[str, Any]:

@@ -12,7 +12,7 @@ from schemas.needs import defaults_by_gas, gases_by_choice
 from schemas.options import Choice, Line, OptionNumber, Words
 from schemas.requests import CORRELATION, SAMPLES_LIMIT
 from schemas.samples import MISSING_MARKS, NUMBER, Measured
-from schemas.vocabulary import UNCERTAIN, quantity_families, quantity_inputs
+from schemas.vocabulary import UNCERTAIN, quantity_families, uncertain_inputs
 from service.physics.declare import GASES, QUANTITIES, SIDES, TERMS, Family, Quantity, Term
 from service.physics.question import known_names
 from service.physics.units import allowed
@@ -170,7 +170,7 @@ def _family_facts(family: Family) -> Described:
 
 def patterned(quantity: Quantity) -> dict[str, Described]:
     """Return what is sent under names made of other names: a pattern for the name to what may stand there."""
-    names = "|".join(quantity_inputs(quantity))
+    names = "|".join(uncertain_inputs(quantity))
     number = {"type": "number", "minimum": -1, "maximum": 1}
     text = {"type": "string", "pattern": rf"^\s*(?:{NUMBER.pattern})\s*$"}
     return {

@@ -9,6 +9,7 @@ from schemas.checked import Input, Request
 from schemas.doubts import check_doubts, with_correlations
 from schemas.options import ONCE
 from schemas.samples import Reading
+from schemas.series import AREA, TIME, check_course, check_order, check_shared, reads_time, series_asked
 from schemas.vocabulary import (
     UNCERTAIN,
     family_choices,
@@ -69,13 +70,17 @@ def load(quantity: Quantity, raw: Mapping[str, Any]) -> Request:
     strangers = [name for name in sent if name not in known or name == "units"]
     refuse_strangers(quantity, strangers)
     inputs = quantity_inputs(quantity)
+    if not reads_time(inputs, sent):
+        sent.pop(TIME, None)  # it passes through
     sent = {name: [None] if value is None and name in inputs else value for name, value in sent.items()}
     try:
         loaded = schema_of(quantity, frozenset(sent)).load(sent)
     except ValidationError as error:
         raise Refused(*_faults(error)) from error
     request = _request(quantity, loaded, units)
-    return with_correlations(request, correlations) if correlations else request
+    request = with_correlations(request, correlations) if correlations else request
+    check_shared(request)
+    return request
 
 
 def _faults(error: ValidationError) -> list[Fault]:
@@ -99,9 +104,16 @@ def _request(quantity: Quantity, loaded: dict[str, Any], units: Mapping[str, Any
     doubtful = {name: readings.pop(name) for name in list(readings) if name.startswith(UNCERTAIN)}
     options = {name: value for name, value in loaded.items() if not isinstance(value, Reading)}
     water, mass_as = options.get("water"), options.get("mass_as", "gas")
+    known = quantity_inputs(quantity)
+    apart = [name for name in (TIME, AREA) if name in readings and name not in known]
+    beside = {name: _input(name, readings.pop(name), gas, mass_as) for name in apart}
     inputs = [_input(name, reading, gas, mass_as) for name, reading in readings.items()]
     doubts = [_doubt(name, reading, inputs, gas, mass_as) for name, reading in doubtful.items()]
-    samples = _samples(inputs, doubts)
+    time = beside.get(TIME) or next((each for each in inputs if each.term == TIME), None)
+    samples = _samples([*inputs, *([time] if TIME in beside and time else [])], doubts)
+    check_course(inputs, samples)
+    check_order(time, samples)
+    series = series_asked(quantity, options, time, beside.get(AREA), [each.term for each in doubts])
     given = frozenset(each.term for each in inputs)
     _check_position(given)
     pick = options.get("pick", ())
@@ -136,7 +148,7 @@ def _request(quantity: Quantity, loaded: dict[str, Any], units: Mapping[str, Any
         frozenset(each.term for each in inputs if each.column is not None),
     )
     check_doubts(question, doubts)
-    return Request(question, tuple(inputs), samples, options, tuple(doubts))
+    return Request(question, tuple(inputs), samples, options, tuple(doubts), series=series)
 
 
 def _all_that_apply(gas: Gas, water: str, given: frozenset[str], inputs: Iterable[Input]) -> tuple[str, ...]:
@@ -196,7 +208,8 @@ def _doubt(name: str, reading: Reading, inputs: Iterable[Input], gas: Gas, mass_
 
 
 def _samples(inputs: Iterable[Input], doubts: Iterable[Input]) -> int:
-    lengths = {each.term: each.values.size for each in inputs if each.values is not None}
+    samples = (each for each in inputs if TERMS[each.term].holds != "course")
+    lengths = {each.term: each.values.size for each in samples if each.values is not None}
     lengths |= {UNCERTAIN + each.term: each.values.size for each in doubts if each.values is not None}
     longest = max(lengths.values(), default=1)
     if longest > SAMPLES_LIMIT:
@@ -215,6 +228,8 @@ def _samples(inputs: Iterable[Input], doubts: Iterable[Input]) -> int:
     for name, size in lengths.items():
         if TERMS[name.removeprefix(UNCERTAIN)].holds == "request" and size > 1:
             faults.append(Fault("length", name, ONCE))
+    columns = (each.term for each in inputs if each.column is not None)
+    faults += [Fault("column", name, ONCE) for name in columns if TERMS[name].holds == "request"]
     if faults:
         raise Refused(*faults)
     return longest
@@ -256,6 +271,8 @@ def _method(family: Family, gas: Gas, name: str) -> str:
 
 
 def _parameterisations(gas: Gas, water: str | None, names: tuple[str, ...]) -> tuple[str, ...]:
+    if not names:
+        return ()
     family = FAMILIES[TRANSFER_FAMILY]
     choices = family_choices(family, gas)
     faults = []

@@ -16,6 +16,7 @@ LOST_PLUS = re.compile(r"[eE] [0-9]", re.ASCII)
 DECIMAL_COMMA = "a comma: write a decimal point, or send decimal=comma; lists are parted by ;"
 MISSING_MARKS = frozenset({"", "na", "nan", "null"})
 PLAIN_TYPES = {int, float}
+READ_AT_ONCE = {*PLAIN_TYPES, type(None)}  # numpy reads None as NaN
 NO_NUMBERS = {bool: "true or false", list: "an array inside an array", dict: "an object inside an array"}
 SHOWN = 60  # characters of a bad value that are repeated to its sender
 
@@ -126,7 +127,7 @@ class Measured(fields.Field[Reading]):
     def _array(self, numbers: list[Any]) -> Array:
         if not numbers:
             raise _fault(self.term, "length", "holds no values")
-        if not set(map(type, numbers)) <= PLAIN_TYPES:
+        if not set(map(type, numbers)) <= READ_AT_ONCE:
             numbers = self._elements(numbers)
         try:
             return np.array(numbers, dtype=float)

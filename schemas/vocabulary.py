@@ -8,6 +8,7 @@ from marshmallow import RAISE, Schema, fields
 
 from schemas.options import Choice, Line, OptionNumber, Words
 from schemas.samples import Measured
+from schemas.series import series_fields
 from service.physics.declare import DERIVED, FAMILIES, GASES, QUANTITIES, STEPS, TERMS, Family, Gas, Quantity
 from service.physics.faults import Fault, Refused, unknown
 from service.physics.methods import GIVEN, TRANSFER_FAMILY, methods_for, remarks_of
@@ -89,7 +90,12 @@ def request_fields(quantity: Quantity) -> dict[str, fields.Field[Any]]:
     }
     for name in quantity_inputs(quantity):
         found[name] = Measured(TERMS[name], metadata={"description": TERMS[name].meaning})
-    return found | uncertainty_fields(quantity)
+    return found | series_fields(quantity) | uncertainty_fields(quantity)
+
+
+def uncertain_inputs(quantity: Quantity) -> tuple[str, ...]:
+    """Return the inputs that may have a standard uncertainty: all but times."""
+    return tuple(name for name in quantity_inputs(quantity) if TERMS[name].holds in ("sample", "request"))
 
 
 def uncertainty_fields(quantity: Quantity) -> dict[str, fields.Field[Any]]:
@@ -111,7 +117,7 @@ def uncertainty_fields(quantity: Quantity) -> dict[str, fields.Field[Any]]:
             0.01, 0.9999, metadata={"description": "probability of the coverage interval to be told"}
         ),
     }
-    for name in quantity_inputs(quantity):
+    for name in uncertain_inputs(quantity):
         about = {"description": f"standard uncertainty of {name}, in the unit in which it is sent"}
         found[UNCERTAIN + name] = Measured(TERMS[name], prefix=UNCERTAIN, metadata=about)
     return found
@@ -130,8 +136,6 @@ TOLD = 20  # unknown names that are told in full
 
 # Words that belong to this vocabulary but to parts of it that do not answer yet: refused, never ignored.
 _PARTS = {
-    "the course in time": "times",
-    "a summary of a series": "summary area",
     "a wind that varies within its averaging time": "wind_averaging wind_speed_variance weibull_shape",
     "a reading without drying": "air_mole_fraction_wet water_mole_fraction_wet air_temperature relative_humidity",
     "an equilibrator apart from the water": "equilibrator_temperature equilibrator_pressure temperature_correction",

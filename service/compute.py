@@ -1,6 +1,6 @@
 """The one view behind every quantity: read, check, plan, run, flag, write."""
 
-from collections.abc import Iterable, Iterator
+from collections.abc import Iterable, Iterator, Mapping
 from itertools import chain
 from typing import Any
 
@@ -12,18 +12,22 @@ from numpy.typing import NDArray
 from schemas.checked import Input, Request
 from schemas.doubts import asked_of
 from schemas.requests import SAMPLES_LIMIT, load
+from schemas.series import PER_SAMPLE, TIME, reads_time, series_of
 from schemas.vocabulary import UNCERTAIN, quantity_inputs
 from service import writers
 from service.columns import bind
 from service.config import Config
+from service.csv_blocks import joined
 from service.csv_table import Block, TableError
 from service.csv_text import answer_header, answer_lines, number_cells
 from service.errors import LISTED, BadSamples
 from service.physics.answer import Answer, answer
 from service.physics.declare import TERMS, Array, Quantity
 from service.physics.faults import Fault, Refused
+from service.physics.summary import Series
 from service.physics.sureness import Asked
 from service.readers import Sent, read, refused_table
+from service.summaries import summary_told
 
 FORMS = ("json", "csv", "number")
 CSV_TYPE, JSON_TYPE, NUMBER_TYPE = "text/csv; charset=utf-8", "application/json", "text/plain; charset=utf-8"
@@ -33,21 +37,29 @@ def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Respons
     """Answer a request for a quantity."""
     form = _form_asked(request)
     sent = read(request, config)
-    raw = bind(sent.table.header, sent.raw, _column_names(quantity)) if sent.table else _without_columns(sent.raw)
+    raw = (
+        bind(sent.table.header, sent.raw, _column_names(quantity, sent.raw))
+        if sent.table
+        else _without_columns(sent.raw)
+    )
     checked = load(quantity, raw)
     form = form or _form_for(request, sent)
+    if checked.series and form != "json":
+        raise Refused(
+            Fault("unknown_option", "summary", f"is told in JSON, not in {form}: send form=json", "form=json")
+        )
     if sent.table is None:
         values = {each.term: each.values for each in checked.inputs if each.values is not None}
         with_steps = checked.options.get("detail") == "steps"
         asked = asked_of(checked, {}, checked.samples)
-        answered = _strictly(
-            answer(checked.question, values, checked.samples, with_steps=with_steps, asked=asked), checked
-        )
-        response = _written(answered, checked, form, asked)
+        series = series_of(checked, checked.series.time.values) if checked.series else None
+        told = answer(checked.question, values, checked.samples, with_steps=with_steps, asked=asked, series=series)
+        response = _written(_strictly(told, checked), checked, form, asked, _more(told, checked, series, sent))
     elif form == "csv":
         response = _csv_behind(sent, checked, request)
     else:
-        response = _written(_whole_table(sent, checked), checked, form, _Columns(sent, checked).asked)
+        told, series = _whole_table(sent, checked)
+        response = _written(told, checked, form, _Columns(sent, checked).asked, _more(told, checked, series, sent))
     if checked.options.get("detail") != "brief":
         assumed, methods = writers.header_text(checked.question)
         response.headers["Catspaw-Assumed"] = assumed
@@ -55,10 +67,13 @@ def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Respons
     return response
 
 
-def _column_names(quantity: Quantity) -> list[str]:
+def _column_names(quantity: Quantity, sent: Mapping[str, Any]) -> list[str]:
     """Return the inputs that a column may hold; what stands once for the request is never read from one."""
-    names = [name for name in quantity_inputs(quantity) if TERMS[name].holds != "request"]
-    return [*names, *(UNCERTAIN + name for name in names)]
+    inputs = quantity_inputs(quantity)
+    names = [name for name in inputs if TERMS[name].holds in PER_SAMPLE]
+    if reads_time(inputs, sent) and TIME not in names:
+        names.append(TIME)
+    return [*names, *(UNCERTAIN + name for name in names if TERMS[name].holds == "sample")]
 
 
 def _without_columns(raw: dict[str, Any]) -> dict[str, Any]:
@@ -114,12 +129,26 @@ def _refuse_lost(parts: Iterable[tuple[Answer, NDArray[Any] | None]]) -> None:
         raise BadSamples(faults, bad, samples)
 
 
-def _written(answered: Answer, checked: Request, form: str, asked: Asked | None) -> Response:
+def _more(answered: Answer, checked: Request, series: Series | None, sent: Sent) -> dict[str, Any]:
+    """Return what JSON tells beside the results: the times as they were sent, the summary."""
+    more = {TIME: sent.raw[TIME]} if TIME in sent.raw and sent.table is None else {}
+    if series:
+        more["summary"] = summary_told(answered, series, checked.options.get("mass_as", "gas"))
+    return more
+
+
+def _written(
+    answered: Answer, checked: Request, form: str, asked: Asked | None, more: Mapping[str, Any] | None = None
+) -> Response:
     options = checked.options
     if form == "json":
-        return Response(writers.json_bytes(answered, options.get("detail", "full"), asked), mimetype=JSON_TYPE)
+        told = writers.json_bytes(answered, options.get("detail", "full"), asked, _course(checked), more)
+        return Response(told, mimetype=JSON_TYPE)
     if form == "csv":
         return Response(_csv_alone(answered, checked, asked), content_type=CSV_TYPE)
+    first = answered.question.wanted[0].name
+    if answered.outcome.results[first].ndim > 1:
+        raise Refused(Fault("unknown_option", "form", f"number cannot hold the course of {first}", "json, csv"))
     lines = list(writers.number_lines(answered, options.get("decimal", "point")))
     if len(lines) == 1 and lines[0] == "NaN":
         reasons = "; ".join(answered.outcome.verdict.reasons.get(0, [])) or "no result"
@@ -130,10 +159,12 @@ def _written(answered: Answer, checked: Request, form: str, asked: Asked | None)
 def _csv_alone(answered: Answer, checked: Request, asked: Asked | None) -> bytes:
     """Return a table of the inputs as they were understood and the results behind them."""
     options = checked.options
-    names = [f"{each.term} [{TERMS[each.term].unit}]" for each in checked.inputs]
-    inputs = [np.broadcast_to(each.values, answered.samples) for each in checked.inputs if each.values is not None]
+    shown = [each for each in checked.inputs if TERMS[each.term].holds != "course"]
+    names = [f"{each.term} [{TERMS[each.term].unit}]" for each in shown]
+    inputs = [np.broadcast_to(each.values, answered.samples) for each in shown if each.values is not None]
     numbers, texts = writers.csv_columns(answered)
-    header = ",".join([*names, *writers.csv_names(answered.question, options.get("headers", "units"), asked)])
+    added = writers.csv_names(answered.question, options.get("headers", "units"), asked, _course(checked))
+    header = ",".join([*names, *added])
     columns = [*inputs, *numbers]
     missing = options.get("missing", "").encode()
     first = number_cells(columns[0], missing)
@@ -152,13 +183,19 @@ class _Columns:
         self.columns: list[Input] = [each for each in checked.inputs if each.column is not None and each.term in used]
         leaves = {leaf for plan in checked.question.plans.values() for leaf in plan.leaves}
         self.doubts: list[Input] = [each for each in checked.doubts if each.column is not None and each.term in leaves]
-        if lists := [name for name, array in self.constants.items() if array.size > 1]:
+        several = [name for name, array in self.constants.items() if array.size > 1]
+        times = [name for name in (*self.constants, *self._summary_time(checked)) if TERMS[name].holds == "series"]
+        if times:
+            raise Refused(Fault("length", TIME, "stands once beside a table: name its column, time=@header"))
+        if lists := [name for name in several if TERMS[name].holds != "course"]:
             raise Refused(
                 *(Fault("length", name, "is a list beside a table: send one value, or a column") for name in lists)
             )
         self.checked = checked
         if sent.table is None:
             raise Refused(Fault("table", "csv", "is not there"))
+        if checked.series and checked.series.time.column is not None:
+            self.columns.append(checked.series.time)
         placed = {each.term: each.column for each in self.columns if each.column is not None}
         doubted = [each.column for each in self.doubts if each.column is not None]
         indices = [column.index for column in (*placed.values(), *doubted)]
@@ -167,13 +204,24 @@ class _Columns:
         nothing_yet = {each.term: np.zeros(1) for each in self.doubts}
         self.rows = sent.table.rows_at_most
         self.asked = asked_of(checked, nothing_yet, self.rows)
-        self.blocks = sent.table.blocks(indices, decimal_comma=checked.options.get("decimal") == "comma")
+        series = [each for each in self.columns if TERMS[each.term].holds == "series"]
+        moments = {each.column.index: each.conversion.factor for each in series if each.column is not None}
+        comma = checked.options.get("decimal") == "comma"
+        self.blocks = sent.table.blocks(indices, decimal_comma=comma, moments=moments)
+        if series:  # it hangs together
+            self.blocks = joined(self.blocks)
+
+    @staticmethod
+    def _summary_time(checked: Request) -> list[str]:
+        """Return the time of a summary where it is no column."""
+        return [TIME] if checked.series and checked.series.time.column is None else []
 
     def numbers(self, columns: list[Array]) -> tuple[dict[str, Array], dict[str, Array]]:
         """Return the inputs and the uncertainties that columns hold, in the unit of their term."""
         values, doubts = dict(self.constants), {}
         for each, column in zip(self.columns, columns, strict=False):
-            values[each.term] = each.conversion.to_base(column)
+            is_time = TERMS[each.term].holds == "series"  # read as days already
+            values[each.term] = column if is_time else each.conversion.to_base(column)
         for each, column in zip(self.doubts, columns[len(self.columns) :], strict=True):
             doubts[each.term] = each.conversion.scale(column)
         return values, doubts
@@ -196,7 +244,7 @@ def _csv_behind(sent: Sent, checked: Request, request: HttpRequest) -> Response:
         raise Refused(Fault("table", "csv", "is not there"))
     header, options = sent.table.header, checked.options
     table = _Columns(sent, checked)
-    added = writers.csv_names(checked.question, options.get("headers", "units"), table.asked)
+    added = writers.csv_names(checked.question, options.get("headers", "units"), table.asked, _course(checked))
     plain = {name.partition(" [")[0] for name in added}
     plain -= {
         name for name, raw in zip(header.names, header.raw, strict=True) if {name, raw} & {*options.get("ignore", ())}
@@ -224,22 +272,21 @@ def _csv_behind(sent: Sent, checked: Request, request: HttpRequest) -> Response:
     return Response(parts, content_type=CSV_TYPE)
 
 
-def _whole_table(sent: Sent, checked: Request) -> Answer:
-    """Return the answer to a whole table at once, for forms that have no lines to stand behind."""
+def _whole_table(sent: Sent, checked: Request) -> tuple[Answer, Series | None]:
+    """Return the answer to a whole table at once, for forms that have no lines to stand behind, and its series."""
     gathered = _Columns(sent, checked)
-    blocks = list(gathered.blocks)
-    samples = sum(len(block.lines) for block in blocks)
+    (block,) = joined(gathered.blocks)
+    samples = len(block.lines)
     if samples > SAMPLES_LIMIT:
         limit = f"{SAMPLES_LIMIT} samples"
         raise Refused(Fault("too_large", "csv", f"of {samples} rows is over the limit of this form", limit), status=413)
-    columns = [np.concatenate(parts) for parts in zip(*(block.columns for block in blocks), strict=True)]
-    values, doubts = gathered.numbers(columns)
+    values, doubts = gathered.numbers(block.columns)
     asked = asked_of(checked, doubts, samples)
-    bad: dict[int, str] = {}
-    start = 0
-    for block in blocks:
-        bad |= {start + row: reason for row, reason in block.bad.items()}
-        start += len(block.lines)
-    numbers = np.concatenate([block.line_numbers for block in blocks])
-    answered = answer(checked.question, values, samples, bad, gathered.labels, asked=asked)
-    return _strictly(answered, checked, numbers)
+    series = series_of(checked, values.pop(TIME)) if checked.series else None
+    answered = answer(checked.question, values, samples, block.bad, gathered.labels, asked=asked, series=series)
+    return _strictly(answered, checked, block.line_numbers), series
+
+
+def _course(checked: Request) -> Array | None:
+    """Return the times of a course, None where none is told."""
+    return next((each.values for each in checked.inputs if TERMS[each.term].holds == "course"), None)

@@ -7,7 +7,7 @@ which is walked cell by cell.
 """
 
 import re
-from collections.abc import Iterator, Sequence
+from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
 
 import numpy as np
@@ -24,6 +24,7 @@ from service.csv_header import (
     read_header,
     shown,
 )
+from service.csv_moments import read_moments
 from service.csv_numbers import Numbers, Octets, Offsets, read_numbers
 
 __all__ = ["Block", "Header", "Limits", "Table", "TableError", "open_table"]
@@ -129,7 +130,13 @@ class Table:
         """Return an upper limit of the data rows."""
         return self._body.count(b"\n") + 1
 
-    def blocks(self, used: Sequence[int], decimal_comma: bool = False, rows: int = 16384) -> Iterator[Block]:
+    def blocks(
+        self,
+        used: Sequence[int],
+        decimal_comma: bool = False,
+        rows: int = 16384,
+        moments: Mapping[int, float] | None = None,
+    ) -> Iterator[Block]:
         """Yield the table block by block.
 
         The first block is read whole before it is yielded, so a caller that takes it before the first byte of
@@ -143,6 +150,8 @@ class Table:
             Whether ``12,5`` is a number, and ``12.5`` none.
         rows : int
             Records in a block, at most. What is read does not depend on it.
+        moments : mapping of int to float, optional
+            Indices of the columns to read as times, with the days in the unit of their numbers.
 
         Yields
         ------
@@ -162,7 +171,7 @@ class Table:
             if layout is None:
                 layout = self._walk(begin, int(line_ends[-1]), line, refuse=first)
             if len(layout.starts):
-                yield self._read(layout, used, decimal_comma, first)
+                yield self._read(layout, used, decimal_comma, moments or {}, first)
                 first = False
             begin, line = layout.next_byte, layout.next_line
 
@@ -309,7 +318,9 @@ class Table:
             blank[row] = not self._body[starts[row] : stops[row]].strip(b" \t")
         return blank
 
-    def _read(self, layout: _Layout, used: Sequence[int], decimal_comma: bool, first: bool) -> Block:
+    def _read(
+        self, layout: _Layout, used: Sequence[int], decimal_comma: bool, moments: Mapping[int, float], first: bool
+    ) -> Block:
         """Turn a layout into a block."""
         spans = zip(layout.starts.tolist(), layout.stops.tolist(), strict=True)
         lines = [self._body[start:stop] for start, stop in spans]
@@ -327,8 +338,8 @@ class Table:
             short = self._short(block, starts, ends, rows)
             rows, starts, ends = rows[short], starts[short], ends[short]
         for column in used:
-            spans_of_column = starts[:, column], ends[:, column]
-            numbers, bad = read_numbers(self._body, self._octets, *spans_of_column, decimal_comma)
+            cells = self._body, self._octets, starts[:, column], ends[:, column], decimal_comma
+            numbers, bad = read_moments(*cells, moments[column]) if column in moments else read_numbers(*cells)
             name = self.header.names[column] or str(column + 1)
             if first and len(bad) == len(rows) and bad:
                 raise self._unreadable(name, *bad[0], int(layout.line_numbers[rows[0]]), len(rows))

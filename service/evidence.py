@@ -41,8 +41,10 @@ def _asked(one: Check) -> Finding:
     checked = load(QUANTITIES[one.quantity], raw)
     values = {each.term: each.values for each in checked.inputs if each.values is not None}
     outcome = answer(checked.question, values, checked.samples).outcome
-    computed = float(outcome.results[one.result][0])
-    return Finding(one, computed, None if np.isfinite(computed) else "; ".join(outcome.verdict.reasons.get(0, [])))
+    computed = float(outcome.results[one.result][-1])  # of a series the last one
+    if np.isfinite(computed):
+        return Finding(one, computed)
+    return Finding(one, computed, "; ".join(outcome.verdict.reasons.get(checked.samples - 1, [])))
 
 
 def method_names() -> list[str]:

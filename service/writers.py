@@ -2,6 +2,7 @@
 
 import re
 from collections.abc import Iterator, Mapping
+from functools import lru_cache
 from typing import Any
 
 import numpy as np
@@ -39,14 +40,19 @@ def _result(wanted: Wanted, values: Array, spread: Array | None, sure: Sureness 
 
 def _sure(sure: Sureness, spread: Array | None) -> dict[str, Any]:
     """Return what is told of a result's uncertainty; with several methods the parts within and between them."""
-    told: dict[str, Any] = {"u": sure.u, "u_inputs": sure.u_inputs}
+    told: dict[str, Any] = {"u": _rows(sure.u), "u_inputs": _rows(sure.u_inputs)}
     if spread is not None:
-        told["u_total"] = np.sqrt(sure.u**2 + spread**2)
+        told["u_total"] = _rows(np.sqrt(sure.u**2 + spread**2))
     if sure.budget:
-        told["budget"] = sure.budget
-    if sure.low is not None:
-        told["interval"] = {"low": sure.low, "high": sure.high}
+        told["budget"] = {name: _rows(share) for name, share in sure.budget.items()}
+    if sure.low is not None and sure.high is not None:
+        told["interval"] = {"low": _rows(sure.low), "high": _rows(sure.high)}
     return told
+
+
+def _rows(values: Array) -> Array:
+    """Return an array as it can be written: row by row."""
+    return np.ascontiguousarray(values)
 
 
 def _quality(verdict: Verdict) -> dict[str, Any]:
@@ -87,14 +93,36 @@ def _outcome(question: Question, outcome: Outcome, spread: Mapping[str, Array]) 
     return told
 
 
-def json_bytes(answer: Answer, detail: str = "full", asked: Asked | None = None) -> bytes:
-    """Return an answer as JSON: arrays always, null where there is no number."""
+def json_bytes(
+    answer: Answer,
+    detail: str = "full",
+    asked: Asked | None = None,
+    course: Array | None = None,
+    more: Mapping[str, Any] | None = None,
+) -> bytes:
+    """Return an answer as JSON: arrays always, null where there is no number.
+
+    Parameters
+    ----------
+    answer : Answer
+        What is told.
+    detail : str
+        How much of it.
+    asked : Asked, optional
+        What was asked of its uncertainty.
+    course : (times,) array, optional
+        The times of a course. [d]
+    more : mapping, optional
+        What else is told, ahead of methods and assumptions.
+    """
     question = answer.question
     document: dict[str, Any] = {
         "quantity": question.quantity.name,
         **({"gas": question.gas.name} if question.quantity.of_gas else {}),
         "samples": answer.samples,
     }
+    if course is not None:
+        document["times"] = {"values": course, "unit": "d"}
     document |= _outcome(question, answer.outcome, answer.spread)
     if answer.by_parameterisation:
         document["by_parameterisation"] = {
@@ -102,6 +130,7 @@ def json_bytes(answer: Answer, detail: str = "full", asked: Asked | None = None)
         }
     if asked:
         document["uncertainty"] = uncertainty_told(asked, answer.outcome.unpublished)
+    document |= more or {}
     if detail != "brief":
         document["methods"] = question.methods
         document["assumed"] = question.assumed
@@ -128,21 +157,37 @@ def uncertainty_told(asked: Asked, unpublished: tuple[str, ...]) -> dict[str, An
     return told
 
 
-def csv_names(question: Question, headers: str = "units", asked: Asked | None = None) -> list[str]:
+def csv_names(
+    question: Question, headers: str = "units", asked: Asked | None = None, course: Array | None = None
+) -> list[str]:
     """Return the headers of the columns that are written, in order, the flag and the reason last."""
     names = []
     several = [name for name in question.plans if name] if len(question.plans) > 1 else []
+    courses = _courses(question)
     for each in question.wanted:
         unit = unit_text(each)
         bracket = f" [{unit}]" if headers == "units" else ""
-        names.append(each.name + bracket)
+        stems = [each.name]
         if asked:
-            names += [f"u_{each.name}{bracket}", f"u_inputs_{each.name}{bracket}"]
-            names += [f"{each.name}_{end}{bracket}" for end in ("low", "high") if asked.coverage is not None]
+            stems += [f"u_{each.name}", f"u_inputs_{each.name}"]
+            stems += [f"{each.name}_{end}" for end in ("low", "high") if asked.coverage is not None]
         if several:
-            names.append(f"{each.name}_spread{bracket}")
-            names += [f"{each.name}.{name}{bracket}" for name in several]
+            stems.append(f"{each.name}_spread")
+            stems += [f"{each.name}.{name}" for name in several]
+        if course is not None and each.name in courses:
+            stems = [f"{stem}.t={time:.12g}" for stem in stems for time in course.tolist()]
+        names += [stem + bracket for stem in stems]
     return [*names, "quality_flag", "quality_reason"]
+
+
+def _courses(question: Question) -> set[str]:
+    """Return the results that are told at several times: those that depend on a term that holds for a course."""
+    steps = next(iter(question.plans.values()))
+    reached = {leaf for leaf in steps.leaves if TERMS[leaf].holds == "course"}
+    for node in steps.nodes:
+        if not reached.isdisjoint(node.arguments):
+            reached.update(node.results)
+    return {each.name for each in question.wanted if steps.keys[each.term] in reached}
 
 
 def csv_columns(answer: Answer) -> tuple[list[Array], list[Any]]:
@@ -156,6 +201,7 @@ def csv_columns(answer: Answer) -> tuple[list[Array], list[Any]]:
         if answer.by_parameterisation:
             numbers.append(answer.spread[each.name])
             numbers += [outcome.results[each.name] for outcome in answer.by_parameterisation.values()]
+    numbers = [column for array in numbers for column in (array.T if array.ndim > 1 else [array])]
     verdict = answer.outcome.verdict
     reasons = [""] * answer.samples
     for row, told in verdict.reasons.items():
@@ -193,6 +239,7 @@ def number_lines(answer: Answer, decimal: str) -> Iterator[str]:
         yield number_text(value, decimal)
 
 
+@lru_cache(maxsize=1024)
 def header_text(question: Question) -> tuple[str, str]:
     """Return what was assumed and which methods were used, each as one header line."""
     assumed = "; ".join(

@@ -5,12 +5,13 @@ from dataclasses import dataclass, field
 
 import numpy as np
 
-from service.physics.declare import Array, Step
+from service.physics.declare import TERMS, Array, Step
 from service.physics.engine import Shared, run
-from service.physics.judge import BAD, SUSPECT, Verdict, judge, judge_results
+from service.physics.judge import BAD, SUSPECT, Verdict, judge, judge_results, mark_left_out, mark_order
 from service.physics.plans import Plan
 from service.physics.question import Question
-from service.physics.sureness import Asked, Sureness, over_methods, sureness, uncertain
+from service.physics.summary import Series, Summary, summarise
+from service.physics.sureness import Asked, Sureness, of_samples, over_methods, sureness, uncertain
 
 
 @dataclass(frozen=True, slots=True)
@@ -32,6 +33,7 @@ class Outcome:
     chain: tuple[Told, ...] = ()
     sure: Mapping[str, Sureness] = field(default_factory=dict)
     unpublished: tuple[str, ...] = ()
+    summary: Summary | None = None
 
 
 @dataclass(frozen=True, slots=True)
@@ -53,6 +55,7 @@ def answer(
     labels: Mapping[str, str] | None = None,
     with_steps: bool = False,
     asked: Asked | None = None,
+    series: Series | None = None,
 ) -> Answer:
     """Compute the answer to a question.
 
@@ -72,13 +75,20 @@ def answer(
         Whether the calculation is told step by step.
     asked : Asked, optional
         How sure the results are to be told.
+    series : Series, optional
+        The times of the samples, where a summary over them is to be told.
 
     Returns
     -------
     Answer
     """
-    inputs = {name: values[name] for name in values if name in question.used}
+    used = {name: values[name] for name in values if name in question.used}
+    inputs = {name: array for name, array in used.items() if TERMS[name].holds != "course"}
     verdict = judge(inputs, samples, labels or {})
+    mark_order(inputs, verdict)
+    if series:
+        mark_left_out(series.time, verdict)
+    inputs |= {name: array[:, np.newaxis] for name, array in used.items() if TERMS[name].holds == "course"}
     for row, reason in (unreadable or {}).items():
         verdict.reasons[row] = []  # what could not be read is not missing
         verdict.flags[row] = BAD
@@ -87,7 +97,7 @@ def answer(
         asked = uncertain(asked, verdict, samples)
     shared: Shared | None = {} if len(question.plans) > 1 else None
     outcomes = {
-        name: _outcome(question, steps, inputs, verdict, shared, with_steps, asked)
+        name: _outcome(question, steps, inputs, verdict, shared, with_steps, asked, series)
         for name, steps in question.plans.items()
     }
     if len(outcomes) == 1:
@@ -105,6 +115,7 @@ def _outcome(
     shared: Shared | None,
     with_steps: bool,
     asked: Asked | None,
+    series: Series | None,
 ) -> Outcome:
     known = run(steps, inputs, shared)
     verdict = Verdict(judged.flags.copy(), {row: list(told) for row, told in judged.reasons.items()})
@@ -113,14 +124,15 @@ def _outcome(
     any_lost = bool(lost.any())
 
     def told(array: Array) -> Array:
-        whole = array if array.size == lost.size else np.repeat(array, lost.size)
-        return np.where(lost, np.nan, whole) if any_lost else whole
+        whole = of_samples(array, lost.size)
+        return np.where(lost if whole.ndim == 1 else lost[:, np.newaxis], np.nan, whole) if any_lost else whole
 
     results = {each.name: told(each.conversion.from_base(known[steps.keys[each.term]])) for each in question.wanted}
     chain = tuple(_chain(steps, known, told)) if with_steps else ()
-    if asked is None:
-        return Outcome(results, verdict, chain)
-    return Outcome(results, verdict, chain, *sureness(question, steps, known, asked, verdict))
+    sure, spread = (None, None) if asked is None else sureness(question, steps, known, asked, verdict)
+    doubt = None if asked is None else asked.doubt
+    summary = summarise(question, steps, known, lost, series, spread, doubt) if series else None
+    return Outcome(results, verdict, chain, sure or {}, spread.unpublished if spread else (), summary)
 
 
 def _chain(steps: Plan, known: Mapping[str, Array], told: Callable[[Array], Array]) -> Iterator[Told]:

@@ -49,9 +49,15 @@ KINDS: Mapping[str, str] = {
     "formula": "independent formula: another published formula agrees within a stated bound",
     "transcription": "none from outside yet: transcription only, the printed coefficients computed a second time",
 }
-PUBLISHED = ("paper", "standard", "handbook", "worked example")
 OPTIONS = ("gas", "water", "mass_as")  # what a caller may say beside inputs and methods
-CHOICES = (GIVEN, "none", "upward", "downward", "linear", "nonlinear")  # members of families that are no published methods
+CHOICES = (
+    GIVEN,
+    "none",
+    "upward",
+    "downward",
+    "linear",
+    "nonlinear",
+)  # members of families that are no published methods
 Cell = TypeVar("Cell")
 
 
@@ -256,7 +262,7 @@ def checks() -> tuple[Check, ...]:
 
 
 def compute_step(row: Check) -> float:
-    """Return the number of a row that asks for a term directly, in the row's unit.
+    """Return the number of a row that asks for a term directly, in the row's unit; of a series the last one.
 
     Raises
     ------
@@ -265,9 +271,9 @@ def compute_step(row: Check) -> float:
     """
     if row.plan.missing:
         raise DeclarationError(f"check {row.id}: {', '.join(row.plan.missing)} is missing")
-    values = {name: np.array([float(text)]) for name, text in row.inputs.items() if name in TERMS}
-    known = run(row.plan, values)
-    return float(row.conversion.from_base(known[row.plan.keys[row.term]])[0])
+    sent = {name: text.split(";") for name, text in row.inputs.items() if name in TERMS}
+    known = run(row.plan, {name: np.array(numbers, dtype=float) for name, numbers in sent.items()})
+    return float(row.conversion.from_base(known[row.plan.keys[row.term]])[-1])
 
 
 def declared_methods() -> tuple[tuple[Family, str], ...]:

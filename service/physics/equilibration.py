@@ -1,4 +1,4 @@
-"""How long the mixed layer takes to come into equilibrium with the air, and what is left of a disequilibrium by then."""
+"""How long the mixed layer takes to come into equilibrium with the air, and what is left of a disequilibrium."""
 
 import numpy as np
 

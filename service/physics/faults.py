@@ -15,6 +15,7 @@ CODES = {
     "not_a_number": "text where a number is expected",
     "decimal_comma": "a comma in a number",
     "length": "arrays of unequal length, or of none",
+    "order": "times that do not increase",
     "near_miss": "a CSV header that is nearly the name of an input",
     "collision": "a CSV header that is also the name of a column to be written",
     "column": "a CSV column that is named but not there",

@@ -1,6 +1,7 @@
 """Good samples beside bad ones: IOC quality flags and the reasons for them."""
 
-from collections.abc import Iterable, Mapping
+import math
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass, field
 
 import numpy as np
@@ -8,6 +9,7 @@ from numpy.typing import NDArray
 
 from service.physics.declare import TERMS, Array, Limits, Term
 from service.physics.plans import Plan, Range
+from service.physics.series import out_of_order
 
 GOOD, SUSPECT, BAD, MISSING = 1, 3, 4, 9  # UNESCO, IOC Manuals and Guides 54, vol. 3
 NO_NUMBER = "no method gives a number here"
@@ -20,14 +22,15 @@ class Verdict:
     flags: NDArray[np.int8]
     reasons: dict[int, list[str]] = field(default_factory=dict)
 
-    def mark(self, rows: Iterable[int], flag: int, reason: str | Mapping[int, str]) -> None:
+    def mark(self, rows: Sequence[int] | NDArray[np.intp], flag: int, reason: str | Sequence[str]) -> None:
         """Raise the flag of some samples and add a reason, one for all or one for each; a reason is told once."""
-        for row in map(int, rows):
-            text = reason if isinstance(reason, str) else reason[row]
+        where = np.asarray(rows, dtype=np.intp)
+        self.flags[where] = np.maximum(self.flags[where], flag)
+        texts = [reason] * where.size if isinstance(reason, str) else reason
+        for row, text in zip(where.tolist(), texts, strict=True):
             told = self.reasons.setdefault(row, [])
             if text not in told:
                 told.append(text)
-            self.flags[row] = max(int(self.flags[row]), flag)
 
     @property
     def lost(self) -> NDArray[np.bool_]:
@@ -36,8 +39,8 @@ class Verdict:
 
 
 def number_text(value: float) -> str:
-    """Return a number as a person writes it, to six figures."""
-    return f"{value:.6g}"
+    """Return a number as a person writes it, to six figures and without a negative zero."""
+    return f"{value + 0.0:.6g}"
 
 
 def limits_text(limits: Limits, unit: str) -> str:
@@ -57,9 +60,24 @@ def possible_text(term: Term) -> str:
     return above + limits_text(term.possible, term.unit)
 
 
-def _rows(mask: NDArray[np.bool_], samples: int) -> Iterable[int]:
+def _rows(mask: NDArray[np.bool_], samples: int) -> NDArray[np.intp]:
     """Return the marked samples; a value that holds for every sample marks them all."""
-    return range(samples) if mask.size == 1 and samples > 1 and mask[0] else np.flatnonzero(mask)
+    return np.arange(samples) if mask.size == 1 and samples > 1 and mask[0] else np.flatnonzero(mask)
+
+
+def _told(rows: NDArray[np.intp], array: Array, sentence: Callable[[float], str]) -> list[str]:
+    """Return a sentence for the value of each sample; each value is put into words once, since many recur."""
+    values, which = np.unique(array[rows] if array.size > 1 else np.repeat(array, rows.size), return_inverse=True)
+    sentences = [sentence(value) for value in values.tolist()]
+    return [sentences[place] for place in which.tolist()]
+
+
+def _extent(array: Array) -> tuple[float, float]:
+    """Return the smallest and the largest number; a reduction costs as much for one number as for many."""
+    if array.size == 1:
+        value = array.item()
+        return value, value
+    return array.min(), array.max()
 
 
 def judge(values: dict[str, Array], samples: int, labels: Mapping[str, str]) -> Verdict:
@@ -83,7 +101,7 @@ def judge(values: dict[str, Array], samples: int, labels: Mapping[str, str]) -> 
     for name, array in values.items():
         term = TERMS[name]
         low, high = term.possible
-        smallest, largest = array.min(), array.max()
+        smallest, largest = _extent(array)
         if (smallest > low if term.above_lower_limit else smallest >= low) and largest <= high:
             continue
         missing = np.isnan(array)
@@ -92,14 +110,40 @@ def judge(values: dict[str, Array], samples: int, labels: Mapping[str, str]) -> 
         within = (array > low if term.above_lower_limit else array >= low) & (array <= high)
         impossible = ~within & ~missing
         if impossible.any():
-            allowed = possible_text(term)
-            told = {
-                row: f"{label} {number_text(array[row if array.size > 1 else 0])} is impossible: {allowed}"
-                for row in _rows(impossible, samples)
-            }
-            verdict.mark(told, BAD, told)
+            _tell_impossible(verdict, label, term, _rows(impossible, samples), array)
             values[name] = np.where(impossible, np.nan, array)
     return verdict
+
+
+def mark_order(values: dict[str, Array], verdict: Verdict) -> None:
+    """Flag samples of a series that are not later than every one before them, and blank their time.
+
+    Parameters
+    ----------
+    values : dict of str to array
+        Inputs by name, from `judge`; only those that hold for a series are looked at.
+    verdict : Verdict
+        Raised in place.
+    """
+    for name in [name for name in values if TERMS[name].holds == "series"]:
+        late = out_of_order(values[name])
+        if late.any():
+            told = f"{name} is not later than that of every sample before it: the sample is left out of the series"
+            verdict.mark(np.flatnonzero(late), BAD, told)
+            values[name] = np.where(late, np.nan, values[name])
+
+
+def _tell_impossible(verdict: Verdict, label: str, term: Term, rows: NDArray[np.intp], array: Array) -> None:
+    allowed = possible_text(term)
+    told = _told(rows, array, lambda value: f"{label} {number_text(value)} is impossible: {allowed}")
+    verdict.mark(rows, BAD, told)
+
+
+def mark_left_out(time: Array, verdict: Verdict) -> None:
+    """Tell the samples that a summary leaves out for their time, and flag those that stand out of order."""
+    told = "time is not later than that of every sample before it: the sample is left out of the summary"
+    verdict.mark(np.flatnonzero(out_of_order(time)), SUSPECT, told)
+    verdict.mark(np.flatnonzero(np.isnan(time)), GOOD, "time is missing: the sample is left out of the summary")
 
 
 def judge_results(verdict: Verdict, plan: Plan, known: Mapping[str, Array]) -> None:
@@ -124,15 +168,16 @@ def judge_results(verdict: Verdict, plan: Plan, known: Mapping[str, Array]) -> N
     finite = np.ones(samples, dtype=bool)
     for key in plan.keys.values():
         array = known[key]
-        if not np.isfinite(array.sum()):
-            finite &= np.isfinite(array)
+        if not math.isfinite(array.item() if array.size == 1 else array.sum()):
+            finite &= np.isfinite(array).reshape(-1, array.shape[-1]).all(axis=0)
     if not finite.all():
         verdict.mark(np.flatnonzero(~finite & ~verdict.lost), BAD, NO_NUMBER)
 
 
 def _judge_range(verdict: Verdict, entry: Range, array: Array, samples: int) -> None:
     low, high = entry.limits
-    if array.min() >= low and array.max() <= high:
+    smallest, largest = _extent(array)
+    if smallest >= low and largest <= high:
         return
     outside = (array < low) | (array > high)
     if entry.recommended and entry.term in entry.step.valid:
@@ -144,12 +189,13 @@ def _judge_range(verdict: Verdict, entry: Range, array: Array, samples: int) -> 
     kind = "recommended range" if entry.recommended else "range"
     allowed = limits_text(entry.limits, term.unit)
     unit = "" if term.unit == "1" else f" {term.unit}"
-    told = {}
-    for row in _rows(outside, samples):
-        value = float(array[row if array.size > 1 else 0])
+    rows = _rows(outside, samples)
+
+    def sentence(value: float) -> str:
         beyond = low - value if value < low else value - high
-        told[row] = (
+        return (
             f"{entry.term} {number_text(value)}{unit} is outside the {kind} of {method}, {allowed}, "
             f"by {number_text(beyond)}{unit}"
         )
-    verdict.mark(told, GOOD if entry.recommended else SUSPECT, told)
+
+    verdict.mark(rows, GOOD if entry.recommended else SUSPECT, _told(rows, array, sentence))

@@ -42,7 +42,7 @@ class Wanted:
     standard_name: str | None
 
 
-@dataclass(frozen=True, slots=True)
+@dataclass(frozen=True, slots=True, eq=False)
 class Question:
     """What is asked, with a plan for each parameterisation; None stands for the default or the caller's own."""
 
@@ -240,7 +240,8 @@ def _check_inputs(plans: Iterable[Plan], water: str | None, gas: Gas, given: fro
 def _not_by_method(term: str, option: str, method: str, others: Iterable[str]) -> Fault:
     if ways := ways_of(term, method):
         allowed = ", ".join(ways)
-        return Fault("missing_input", ways[0], f"{option} {method} needs at least one of {allowed}", allowed)
+        needed = allowed if len(ways) == 1 else f"at least one of {allowed}"
+        return Fault("missing_input", ways[0], f"is needed: {option} {method} takes {needed}", allowed)
     allowed = ", ".join(others)
     told = f"is not given by {option} {method}: {TERMS[term].meaning}; choose one of {allowed or 'another'}"
     return Fault("missing_input", term, told, allowed)

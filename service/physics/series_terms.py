@@ -1,4 +1,4 @@
-"""The part of the vocabulary that tells of time: when a sample was taken, what a layer remembers, how stocks turn over."""
+"""The part of the vocabulary that tells of time: when a sample was taken, what a layer remembers, turnover."""
 
 from service.physics.declare import family, input_term, side, term
 
@@ -26,6 +26,15 @@ input_term(
     possible=(0.0, 1.0e4),
     default=0.0,
     example=0.01,
+)
+input_term(
+    "area",
+    "m2",
+    "area of the water for which a summary is told",
+    possible=(0.0, 1.0e15),
+    above_lower_limit=True,
+    holds="request",
+    example=2.5e6,
 )
 
 term("equilibration_rate", "d-1", "inverse of the e-folding time of a disequilibrium of the mixed layer")

@@ -46,6 +46,13 @@ class Sureness:
     high: Array | None = None
 
 
+def of_samples(array: Array, samples: int) -> Array:
+    """Return one number for each sample from an array of them or of one; of a course, one row for each sample."""
+    if array.ndim > 1:
+        return np.broadcast_to(array, (*array.shape[:-1], samples)).T
+    return array if array.size == samples else np.repeat(array, samples)
+
+
 def uncertain(asked: Asked, verdict: Verdict, samples: int) -> Asked:
     """Return what was asked with impossible uncertainties emptied, and the samples told of it.
 
@@ -70,8 +77,8 @@ def uncertain(asked: Asked, verdict: Verdict, samples: int) -> Asked:
 
 def sureness(
     question: Question, steps: Plan, known: Mapping[str, Array], asked: Asked, verdict: Verdict
-) -> tuple[dict[str, Sureness], tuple[str, ...]]:
-    """Return what is told of each wanted result, and the methods that publish no uncertainty.
+) -> tuple[dict[str, Sureness], Spread]:
+    """Return what is told of each wanted result, and the spread from which it is told.
 
     Parameters
     ----------
@@ -98,8 +105,8 @@ def sureness(
     lost = verdict.lost
 
     def shown(values: Array) -> Array:
-        whole = np.broadcast_to(values, lost.shape) if values.size != lost.size else values
-        return np.where(lost, np.nan, whole)
+        whole = of_samples(values, lost.size)
+        return np.where(lost if whole.ndim == 1 else lost[:, np.newaxis], np.nan, whole)
 
     for each in question.wanted:
         key, change = steps.keys[each.term], each.conversion
@@ -111,7 +118,7 @@ def sureness(
             None if low is None else shown(change.from_base(low)),
             None if high is None else shown(change.from_base(high)),
         )
-    return told, found.unpublished
+    return told, found
 
 
 def _tell_apart(linear: Spread, drawn: Spread, keys: Sequence[str], verdict: Verdict) -> None:
@@ -120,7 +127,8 @@ def _tell_apart(linear: Spread, drawn: Spread, keys: Sequence[str], verdict: Ver
             apart = np.abs(drawn.u[key] / linear.u[key] - 1.0) > APART
         if apart.any():
             name = key.partition("@")[0]
-            rows = np.flatnonzero(np.broadcast_to(apart, verdict.flags.shape))
+            anywhere = apart.reshape(-1, apart.shape[-1]).any(axis=0)
+            rows = np.flatnonzero(np.broadcast_to(anywhere, verdict.flags.shape))
             verdict.mark(rows, GOOD, f"u of {name}: first order and Monte Carlo differ by more than a tenth")
 
 

@@ -55,9 +55,7 @@ def turnover_one_way(gas_stock: Array, evasion: Array) -> Array:
     "turnover_net",
     formula="C h / |evasion - invasion|",
     remarks=(
-        Remark(
-            "no net flux: the stock lasts for ever", ("evasion", "invasion"), lambda out, back: out == back, flag=4
-        ),
+        Remark("no net flux: the stock lasts for ever", ("evasion", "invasion"), lambda out, back: out == back, flag=4),
     ),
 )
 def turnover_net(gas_stock: Array, evasion: Array, invasion: Array) -> Array:

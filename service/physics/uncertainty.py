@@ -50,6 +50,8 @@ class Spread:
         Methods that publish no uncertainty, for which u is not given.
     interval : mapping of str to (low, high)
         Coverage interval, where one was asked for.
+    parts : mapping of str to mapping of str to array
+        Derivative times uncertainty of each input and method, signed.
     """
 
     u: Mapping[str, Array]
@@ -57,6 +59,7 @@ class Spread:
     budget: Mapping[str, Mapping[str, Array]]
     unpublished: tuple[str, ...]
     interval: Mapping[str, tuple[Array, Array]] = field(default_factory=dict)
+    parts: Mapping[str, Mapping[str, Array]] = field(default_factory=dict)
 
 
 def groups(plan: Plan, gas: Gas) -> list[Group]:
@@ -164,7 +167,7 @@ def first_order(
     if coverage is not None:
         k = NormalDist().inv_cdf(0.5 + coverage / 2.0)
         interval = {key: (known[key] - k * u[key], known[key] + k * u[key]) for key in keys}
-    return Spread(u, u_inputs, budget, tuple(unpublished), interval)
+    return Spread(u, u_inputs, budget, tuple(unpublished), interval, parts)
 
 
 def _counted(plan: Plan, gas: Gas, doubt: Doubt) -> Iterator[Group]:
@@ -256,20 +259,25 @@ def monte_carlo(
     names = list(doubt.inputs)
     normal = np.random.default_rng(seed).standard_normal((len(names) + len(counted), draws))
     normal[: len(names)] = _correlated(names, doubt.correlations) @ normal[: len(names)]
-    samples = max(known[key].size for key in (*keys, *names))
-    u = {key: np.empty(samples) for key in keys}
-    interval = {key: (np.empty(samples), np.empty(samples)) for key in keys} if coverage is not None else {}
+    samples = max(known[key].shape[-1] for key in (*keys, *names))
+    told = {key: np.empty((3, *known[key].shape[:-1], samples)) for key in keys}
     for row in range(samples):
-        one = {key: array[row : row + 1] if array.size > 1 else array for key, array in known.items()}
+        one = {key: array[..., row : row + 1] if array.shape[-1] > 1 else array for key, array in known.items()}
         drawn = _drawn(plan, one, names, counted, doubt, normal, row)
         for key in keys:
-            values = drawn[key][np.isfinite(drawn[key])] if drawn[key].size > 1 else drawn[key]
-            u[key][row] = values.std(ddof=1) if values.size > 1 else 0.0
-            if coverage is not None:
-                low, high = interval[key]
-                tails = (0.5 - coverage / 2.0, 0.5 + coverage / 2.0)
-                low[row], high[row] = np.quantile(values, tails) if values.size else (np.nan, np.nan)
-    return Spread(u, linear.u_inputs, linear.budget, (), interval)
+            told[key][..., row] = np.apply_along_axis(_of_draws, -1, drawn[key], coverage).T
+    u = {key: each[0] for key, each in told.items()}
+    interval = {key: (each[1], each[2]) for key, each in told.items()} if coverage is not None else {}
+    return Spread(u, linear.u_inputs, linear.budget, (), interval, linear.parts)
+
+
+def _of_draws(values: Array, coverage: float | None) -> Array:
+    """Return standard deviation and coverage interval of some draws, of which those without a number do not count."""
+    values = values[np.isfinite(values)] if values.size > 1 else values
+    u = values.std(ddof=1) if values.size > 1 else 0.0
+    if coverage is None or not values.size:
+        return np.array([u, np.nan, np.nan])
+    return np.array([u, *np.quantile(values, (0.5 - coverage / 2.0, 0.5 + coverage / 2.0))])
 
 
 def _drawn(

@@ -12,22 +12,26 @@ AIR_VISCOSITY = 1.5e-5  # m2 s-1
 GRAVITY_SMITH = 9.81  # m s-2
 REFERENCE_HEIGHT = 10.0  # m
 FIRST_DRAG = 1.2e-3  # 1, the drag coefficient at which the iteration starts
-STEPS_TO_CONVERGE = 12  # fixed, so that no sample depends on its neighbours; 1e-12 from 0.5 to 60 m s-1
+STEPS_TO_CONVERGE = 5  # fixed, so that no sample depends on its neighbours; to rounding wherever there is a root
 STILL_AIR = 0.5  # m s-1, below which the profile of this wind is used: the smooth-flow term has no limit at rest
 
 
 def _friction_velocity(wind_speed: Array, height: Array | float) -> Array:
-    """Return the neutral friction velocity for a wind at a height, by fixed-point steps. [m s-1]"""
+    """Return the neutral friction velocity for a wind at a height, by Newton's steps. [m s-1]"""
     u = np.maximum(wind_speed, STILL_AIR)
     friction = u * np.sqrt(FIRST_DRAG)
     for _ in range(STEPS_TO_CONVERGE):
-        friction = VON_KARMAN * u / np.log(height / _roughness(friction))
+        rough, smooth = _roughness_parts(friction)
+        length = rough + smooth
+        slope = (2.0 * rough - smooth) / length  # of ln z0 by ln u*
+        friction = (VON_KARMAN * u - slope * friction) / (np.log(height / length) - slope)
     return np.asarray(friction)
 
 
-def _roughness(friction_velocity: Array) -> Array:
-    """Return the roughness length. [m]"""
-    return CHARNOCK * friction_velocity**2 / GRAVITY_SMITH + SMOOTH_FLOW * AIR_VISCOSITY / friction_velocity
+def _roughness_parts(friction_velocity: Array) -> tuple[Array, Array]:
+    """Return the two parts of the roughness length, by waves and of smooth flow. [m]"""
+    rough = CHARNOCK * friction_velocity**2 / GRAVITY_SMITH
+    return rough, SMOOTH_FLOW * AIR_VISCOSITY / friction_velocity
 
 
 @step(
@@ -65,7 +69,8 @@ def smith_1988(wind_speed: Array, wind_height: Array) -> Array:
     ----------
     Smith (1988). doi:10.1029/JC093iC12p15467
     """
-    roughness = _roughness(_friction_velocity(wind_speed, wind_height))
+    rough, smooth = _roughness_parts(_friction_velocity(wind_speed, wind_height))
+    roughness = rough + smooth
     return wind_speed * (np.log(REFERENCE_HEIGHT / roughness) / np.log(wind_height / roughness))
 
 

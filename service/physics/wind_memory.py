@@ -20,11 +20,14 @@ samples of the series share.
 """
 
 import numpy as np
+from numpy.typing import NDArray
 
 from service.physics import sources
 from service.physics.constants import METRES_PER_DAY
 from service.physics.declare import Array, Remark, step
 from service.physics.series import gaps_until, in_place, over_time, together
+
+Places = NDArray[np.intp]
 
 MEMORY = 60.0  # d; Reuer et al. (2007)
 WHOLE_LAYER = 700.0  # e-foldings that stand for a layer exchanged whole: exp(-700) is 0 but for 1e-304
@@ -69,7 +72,7 @@ def decayed_sums(gains: Array, depth: Array) -> Array:
     return sums
 
 
-def _weighted(velocity: Array, spans: Array, depth: Array, ends: Array, starts: Array) -> tuple[Array, Array]:
+def _weighted(velocity: Array, spans: Array, depth: Array, ends: Places, starts: Places) -> tuple[Array, Array]:
     """Return the sums over the places behind `starts` up to `ends` of span and decay, times velocity and alone.
 
     Of the velocity only its departures from the first are summed, so that one that does not change is met exactly.

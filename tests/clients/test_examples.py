@@ -2,27 +2,19 @@
 
 import csv
 import io
-import os
 import re
-import socket
 import statistics
 import subprocess
 import sys
-import time
-import urllib.error
-import urllib.request
-from collections.abc import Iterator
 from contextlib import suppress
 from dataclasses import dataclass
 from pathlib import Path
 
 import pytest
 
-ROOT = Path(__file__).parents[2]
-EXAMPLES = ROOT / "examples"
+from tests.clients.running import ENVIRONMENT, EXAMPLES, PATIENCE, free_port
+
 CRUISE = EXAMPLES / "underway_cruise.csv"
-ENVIRONMENT = {name: value for name, value in os.environ.items() if not name.startswith("CATSPAW_")}
-PATIENCE = 60  # s
 HIGHEST_STEADY_WIND = 35.0  # kn at 18 m, below 20 m s-1 at 10 m by any profile
 SQUALL = 44.0  # kn at 18 m, above 20 m s-1 at 10 m by any profile
 
@@ -37,13 +29,6 @@ class Run:
     answered: bytes
 
 
-def free_port() -> int:
-    with socket.socket() as probe:
-        probe.bind(("127.0.0.1", 0))
-        port: int = probe.getsockname()[1]
-        return port
-
-
 def ingest(url: str, output: Path, *more: str) -> Run:
     done = subprocess.run(
         [sys.executable, EXAMPLES / "ingest_cruise.py", "--url", url, "--output", output, *more],
@@ -51,42 +36,9 @@ def ingest(url: str, output: Path, *more: str) -> Run:
         text=True,
         timeout=PATIENCE,
         check=False,
-        env={**ENVIRONMENT, "NO_PROXY": "127.0.0.1"},
+        env=ENVIRONMENT,
     )
     return Run(done.returncode, done.stdout, done.stderr, output.read_bytes() if output.exists() else b"")
-
-
-@pytest.fixture(scope="module")
-def service(tmp_path_factory: pytest.TempPathFactory) -> Iterator[str]:
-    url = f"http://127.0.0.1:{free_port()}"
-    log = tmp_path_factory.mktemp("service") / "log"
-    with log.open("wb") as sink:
-        process = subprocess.Popen(
-            [sys.executable, "-m", "service", "--bind", url.removeprefix("http://"), "--workers", "1"],
-            cwd=ROOT,
-            env=ENVIRONMENT,
-            stdout=sink,
-            stderr=sink,
-        )
-    try:
-        until = time.monotonic() + PATIENCE
-        while not _ready(url):
-            assert process.poll() is None, log.read_text()
-            assert time.monotonic() < until, log.read_text()
-            with suppress(subprocess.TimeoutExpired):
-                process.wait(0.05)
-        yield url
-    finally:
-        process.terminate()
-        process.wait(PATIENCE)
-
-
-def _ready(url: str) -> bool:
-    try:
-        with urllib.request.urlopen(f"{url}/readyz", timeout=5) as response:
-            return bool(response.status == 200)
-    except (urllib.error.URLError, ConnectionError, TimeoutError):
-        return False
 
 
 @pytest.fixture(scope="module")

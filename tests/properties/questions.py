@@ -11,6 +11,7 @@ from service.physics.answer import Answer, answer
 from service.physics.declare import (
     FAMILIES,
     GASES,
+    NO_GAS,
     QUANTITIES,
     SIDES,
     STEPS,
@@ -39,6 +40,9 @@ OPEN_SEA: dict[str, Limits] = {  # where people measure; a law is tried within, 
     "wind_speed": (0.0, 20.0),
     "air_pressure": (900.0, 1050.0),
 }
+
+
+OF_SAMPLES = [name for name, record in QUANTITIES.items() if not record.series]  # each sample stands for itself
 
 
 def transfer_pairs(*usual: str) -> list[tuple[str, str]]:
@@ -103,7 +107,7 @@ def compute(wanted: str | Iterable[str], chosen: Mapping[str, str], gas: str, va
 
 def inputs_for(quantity: Quantity, gas: Gas, chosen: Mapping[str, str], given: Iterable[str] = ()) -> list[str]:
     """Return inputs that suffice for the main results of a quantity."""
-    wanted = tuple(quantity.results)
+    wanted = tuple(name for name in quantity.results if TERMS[name].holds != "course")
     steps = sufficient(wanted, tuple(sorted(chosen.items())), gas.name, tuple(sorted(given)))
     return [name for name in steps.leaves if name not in steps.defaults or name in OPEN_SEA]
 
@@ -119,7 +123,7 @@ def question_for(
     """Return a question as the interface asks it."""
     return ask(
         QUANTITIES[quantity],
-        GASES[gas],
+        gas_of(quantity, gas),
         _water(gas, method),
         frozenset(given),
         (("direction", direction),) if direction != "upward" else (),
@@ -128,6 +132,11 @@ def question_for(
         (),
         "gas",
     )
+
+
+def gas_of(quantity: str, gas: str) -> Gas:
+    """Return a gas, or none where a quantity is of none."""
+    return GASES[gas] if QUANTITIES[quantity].of_gas else NO_GAS
 
 
 def _water(gas: str, method: str | None) -> str | None:
@@ -176,4 +185,4 @@ def typical_values(
 ) -> dict[str, float | Array]:
     """Return typical values of the inputs that suffice for a question, those given first."""
     chosen = {TRANSFER_FAMILY: method} if method else {}
-    return {name: typical(name) for name in inputs_for(QUANTITIES[quantity], GASES[gas], chosen, given)}
+    return {name: typical(name) for name in inputs_for(QUANTITIES[quantity], gas_of(quantity, gas), chosen, given)}

@@ -10,11 +10,10 @@ from hypothesis import strategies as st
 from service.physics.answer import Answer, answer
 from service.physics.declare import GASES, QUANTITIES, TERMS, Array
 from service.physics.question import ask
-from tests.properties.questions import bits, question_for, transfer_pairs, typical_values
+from tests.properties.questions import OF_SAMPLES, bits, question_for, transfer_pairs, typical_values
 
 SAMPLES = 37  # neither a power of two nor a multiple of a vector register
 PAIRS = transfer_pairs("co2")
-WITHOUT_GAS = {name for name in QUANTITIES if name == "true-wind"}
 SPOILED = {3: np.nan, 11: 1e9, 12: -1e9, 20: np.nan}  # samples that are missing or impossible
 
 
@@ -49,9 +48,8 @@ def told(found: Answer, row: int) -> tuple[dict[str, bytes], int, list[str]]:
 
 QUESTIONS: list[tuple[str, str, str | None]] = [
     (quantity, gas, None)
-    for quantity in QUANTITIES
+    for quantity in OF_SAMPLES
     for gas in (GASES if quantity in ("flux", "solubility") else ["co2", "o2"])
-    if quantity not in WITHOUT_GAS
 ]
 QUESTIONS += [("transfer-velocity", gas, method) for method, gas in PAIRS]
 
@@ -65,7 +63,7 @@ def test_a_sample_among_others_has_the_answer_that_it_has_alone(quantity: str, g
         assert told(answer_to(quantity, gas, method, part(values, [row])), 0) == told(together, row)
 
 
-@pytest.mark.parametrize("quantity", [name for name in QUANTITIES if name not in WITHOUT_GAS])
+@pytest.mark.parametrize("quantity", OF_SAMPLES)
 @given(start=st.integers(0, SAMPLES - 2), length=st.integers(2, SAMPLES))
 def test_any_part_of_a_batch_has_the_answers_of_that_part(quantity: str, start: int, length: int) -> None:
     values = inputs_of(quantity, "o2", None)
@@ -84,7 +82,7 @@ def test_the_order_of_the_samples_does_not_matter(order: list[int]) -> None:
     assert all(told(mixed, place) == told(whole, row) for place, row in enumerate(order))
 
 
-@pytest.mark.parametrize("quantity", [name for name in QUANTITIES if name not in WITHOUT_GAS])
+@pytest.mark.parametrize("quantity", OF_SAMPLES)
 def test_the_inputs_are_left_as_they_were(quantity: str) -> None:
     values = inputs_of(quantity, "o2", None)
     before = {name: array.copy() for name, array in values.items()}
