@@ -134,6 +134,13 @@ def _offset(text: str | None) -> timezone:
     return timezone((-1 if text[0] == "-" else 1) * timedelta(minutes=minutes))
 
 
+def _holds_words(value: dict[str, Any]) -> bool:
+    """Tell whether an object of values and unit has times in words among its values."""
+    values = value.get("values")
+    known = set(value) <= {"values", "unit"} and isinstance(values, list)
+    return known and any(isinstance(each, str) and ISO.match(each.strip()) for each in values or ())
+
+
 class Moment(Measured):
     """Times: texts in ISO 8601, numbers of days or of another unit of time, or a CSV column of either."""
 
@@ -149,11 +156,10 @@ class Moment(Measured):
             return self._written([value])
         elif isinstance(value, list) and any(isinstance(each, str) for each in value):
             return self._written(value)
-        elif isinstance(value, dict) and isinstance(value.get("values"), list) and set(value) <= {"values", "unit"}:
-            if any(isinstance(each, str) and ISO.match(each.strip()) for each in value["values"]):
-                if (value.get("unit") or "UTC") not in IN_WORDS:
-                    raise ValidationError([Fault("unit", self.term.name, "a unit stands only beside numbers")])
-                return self._written(value["values"])
+        elif isinstance(value, dict) and _holds_words(value):
+            if (value.get("unit") or "UTC") not in IN_WORDS:
+                raise ValidationError([Fault("unit", self.term.name, "a unit stands only beside numbers")])
+            return self._written(value["values"])
         return super()._deserialize(value, attr, data, **kwargs)
 
     def _written(self, values: list[Any]) -> Reading:

@@ -113,7 +113,7 @@ def _request(quantity: Quantity, loaded: dict[str, Any], units: Mapping[str, Any
     samples = _samples([*inputs, *([time] if TIME in beside and time else [])], doubts)
     check_course(inputs, samples)
     check_order(time, samples)
-    series = series_asked(quantity, options, time, beside.get(AREA), [each.term for each in doubts])
+    series = series_asked(options, time, beside.get(AREA), [each.term for each in doubts])
     given = frozenset(each.term for each in inputs)
     _check_position(given)
     pick = options.get("pick", ())

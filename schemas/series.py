@@ -72,7 +72,7 @@ def check_order(time: Input | None, samples: int) -> None:
 
 
 def series_asked(
-    quantity: Quantity, options: Mapping[str, Any], time: Input | None, area: Input | None, uncertain: Collection[str]
+    options: Mapping[str, Any], time: Input | None, area: Input | None, uncertain: Collection[str]
 ) -> SeriesAsked | None:
     """Return what is asked of a summary, None where none is.
 

@@ -21,7 +21,7 @@ from service.csv_blocks import joined
 from service.csv_table import Block, TableError
 from service.csv_text import answer_header, answer_lines, number_cells
 from service.errors import LISTED, BadSamples
-from service.physics.answer import Answer, answer
+from service.physics.answer import Answer, Unreadable, answer
 from service.physics.declare import TERMS, Array, Quantity
 from service.physics.faults import Fault, Refused
 from service.physics.summary import Series
@@ -37,17 +37,13 @@ def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Respons
     """Answer a request for a quantity."""
     form = _form_asked(request)
     sent = read(request, config)
-    raw = (
-        bind(sent.table.header, sent.raw, _column_names(quantity, sent.raw))
-        if sent.table
-        else _without_columns(sent.raw)
-    )
+    names = _column_names(quantity, sent.raw)
+    raw = bind(sent.table.header, sent.raw, names) if sent.table else _without_columns(sent.raw)
     checked = load(quantity, raw)
     form = form or _form_for(request, sent)
     if checked.series and form != "json":
-        raise Refused(
-            Fault("unknown_option", "summary", f"is told in JSON, not in {form}: send form=json", "form=json")
-        )
+        reason = f"is told in JSON, not in {form}: send form=json"
+        raise Refused(Fault("unknown_option", "summary", reason, "form=json"))
     if sent.table is None:
         values = {each.term: each.values for each in checked.inputs if each.values is not None}
         with_steps = checked.options.get("detail") == "steps"
@@ -226,13 +222,23 @@ class _Columns:
             doubts[each.term] = each.conversion.scale(column)
         return values, doubts
 
+    def unreadable(self, block: Block) -> Unreadable:
+        """Return the rows of a block that could not be read, by the inputs in which they could not."""
+        inputs: dict[str, list[int]] = {}
+        for row, places in block.unread.items():
+            for place in places:
+                name = self.columns[place].term if place < len(self.columns) else ""
+                inputs.setdefault(name, []).append(row)
+        return Unreadable(block.bad, inputs)
+
     def answers(self) -> Iterator[tuple[Block, Answer]]:
         """Yield each block with its answer."""
         try:
             for block in self.blocks:
                 values, doubts = self.numbers(block.columns)
                 asked = asked_of(self.checked, doubts, self.rows)
-                answered = answer(self.checked.question, values, len(block.lines), block.bad, self.labels, asked=asked)
+                unreadable = self.unreadable(block)
+                answered = answer(self.checked.question, values, len(block.lines), unreadable, self.labels, asked=asked)
                 yield block, answered
         except TableError as error:
             raise refused_table(error) from error
@@ -283,7 +289,9 @@ def _whole_table(sent: Sent, checked: Request) -> tuple[Answer, Series | None]:
     values, doubts = gathered.numbers(block.columns)
     asked = asked_of(checked, doubts, samples)
     series = series_of(checked, values.pop(TIME)) if checked.series else None
-    answered = answer(checked.question, values, samples, block.bad, gathered.labels, asked=asked, series=series)
+    answered = answer(
+        checked.question, values, samples, gathered.unreadable(block), gathered.labels, asked=asked, series=series
+    )
     return _strictly(answered, checked, block.line_numbers), series
 
 

@@ -22,8 +22,10 @@ def joined(blocks: Iterator[Block]) -> Iterator[Block]:
     parts = list(blocks)
     bad: dict[int, str] = {}
     mended: dict[int, tuple[bytes, bytes]] = {}
+    unread: dict[int, set[int]] = {}
     start = 0
     for block in parts:
+        unread |= {start + row: places for row, places in block.unread.items()}
         bad |= {start + row: reason for row, reason in block.bad.items()}
         mended |= {start + row: ends for row, ends in block.mended.items()}
         start += len(block.lines)
@@ -34,4 +36,5 @@ def joined(blocks: Iterator[Block]) -> Iterator[Block]:
         [np.concatenate(columns) for columns in zip(*(block.columns for block in parts), strict=True)],
         bad,
         mended,
+        unread,
     )

@@ -49,6 +49,8 @@ class Block:
         One per column asked for; NaN where the cell is missing or bad, or the line is bad.
     bad : dict
         Row in the block → what is wrong with it. A NaN in a row that is not here is a missing cell.
+    unread : dict
+        Row in the block → places in `columns` whose cell is no number; a bad row that is not here is bad whole.
     mended : dict
         Row in the block → what stands before and behind the results, for rows whose own text would not let
         the results land under their headers: too few cells are filled up, an open quote is closed, surplus
@@ -61,6 +63,7 @@ class Block:
     columns: list[Numbers]
     bad: dict[int, str]
     mended: dict[int, tuple[bytes, bytes]]
+    unread: dict[int, set[int]] = field(default_factory=dict)
 
 
 @dataclass(slots=True)
@@ -337,7 +340,7 @@ class Table:
         if (layout.stops - layout.starts).max() > self._limits.cell:
             short = self._short(block, starts, ends, rows)
             rows, starts, ends = rows[short], starts[short], ends[short]
-        for column in used:
+        for place, column in enumerate(used):
             cells = self._body, self._octets, starts[:, column], ends[:, column], decimal_comma
             numbers, bad = read_moments(*cells, moments[column]) if column in moments else read_numbers(*cells)
             name = self.header.names[column] or str(column + 1)
@@ -345,6 +348,7 @@ class Table:
                 raise self._unreadable(name, *bad[0], int(layout.line_numbers[rows[0]]), len(rows))
             for index, (cell, fault) in bad.items():
                 _note(block.bad, int(rows[index]), f"cell {shown(cell.decode())} in column {name} {fault}")
+                block.unread.setdefault(int(rows[index]), set()).add(place)
             values = np.full(len(lines), np.nan)
             values[rows] = numbers
             block.columns.append(values)

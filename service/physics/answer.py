@@ -1,6 +1,6 @@
 """The answer to a question: what the plans give, judged sample by sample, for one method or for several."""
 
-from collections.abc import Callable, Iterator, Mapping
+from collections.abc import Callable, Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
 
 import numpy as np
@@ -12,6 +12,14 @@ from service.physics.plans import Plan
 from service.physics.question import Question
 from service.physics.summary import Series, Summary, summarise
 from service.physics.sureness import Asked, Sureness, of_samples, over_methods, sureness, uncertain
+
+
+@dataclass(frozen=True, slots=True)
+class Unreadable:
+    """Samples with something that is no number: the reason of each, and the inputs it is in, none for all of them."""
+
+    reasons: Mapping[int, str]
+    inputs: Mapping[str, Sequence[int]]
 
 
 @dataclass(frozen=True, slots=True)
@@ -51,7 +59,7 @@ def answer(
     question: Question,
     values: Mapping[str, Array],
     samples: int,
-    unreadable: Mapping[int, str] | None = None,
+    unreadable: Unreadable | None = None,
     labels: Mapping[str, str] | None = None,
     with_steps: bool = False,
     asked: Asked | None = None,
@@ -67,8 +75,8 @@ def answer(
         The inputs that the question uses, in the unit of their term; NaN where missing.
     samples : int
         How many samples there are.
-    unreadable : mapping of int to str, optional
-        Samples that could not be read, with the reason.
+    unreadable : Unreadable, optional
+        Samples that could not be read, or not in all their inputs.
     labels : mapping of str to str, optional
         How the sender knows an input, where not by its own name.
     with_steps : bool
@@ -84,14 +92,17 @@ def answer(
     """
     used = {name: values[name] for name in values if name in question.used}
     inputs = {name: array for name, array in used.items() if TERMS[name].holds != "course"}
-    verdict = judge(inputs, samples, labels or {})
+    unreadable = unreadable or Unreadable({}, {})
+    verdict = judge(inputs, samples, labels or {}, unreadable.inputs)
     mark_order(inputs, verdict)
     if series:
         mark_left_out(series.time, verdict)
     inputs |= {name: array[:, np.newaxis] for name, array in used.items() if TERMS[name].holds == "course"}
-    for row, reason in (unreadable or {}).items():
-        verdict.reasons[row] = []  # what could not be read is not missing
-        verdict.flags[row] = BAD
+    in_part = {row for rows in unreadable.inputs.values() for row in rows}
+    for row, reason in unreadable.reasons.items():
+        if row not in in_part:
+            verdict.reasons[row] = []  # what could not be read is not missing
+            verdict.flags[row] = BAD
         verdict.mark([row], BAD, reason)
     if asked:
         asked = uncertain(asked, verdict, samples)

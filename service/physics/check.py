@@ -50,14 +50,8 @@ KINDS: Mapping[str, str] = {
     "transcription": "none from outside yet: transcription only, the printed coefficients computed a second time",
 }
 OPTIONS = ("gas", "water", "mass_as")  # what a caller may say beside inputs and methods
-CHOICES = (
-    GIVEN,
-    "none",
-    "upward",
-    "downward",
-    "linear",
-    "nonlinear",
-)  # members of families that are no published methods
+# Members of families that are choices, not published methods.
+CHOICES = (GIVEN, "none", "upward", "downward", "linear", "nonlinear")
 Cell = TypeVar("Cell")
 
 

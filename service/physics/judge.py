@@ -80,7 +80,9 @@ def _extent(array: Array) -> tuple[float, float]:
     return array.min(), array.max()
 
 
-def judge(values: dict[str, Array], samples: int, labels: Mapping[str, str]) -> Verdict:
+def judge(
+    values: dict[str, Array], samples: int, labels: Mapping[str, str], unread: Mapping[str, Sequence[int]] | None = None
+) -> Verdict:
     """Flag what is missing or impossible in the inputs and blank it there.
 
     Parameters
@@ -91,6 +93,8 @@ def judge(values: dict[str, Array], samples: int, labels: Mapping[str, str]) -> 
         How many samples there are.
     labels : mapping of str to str
         How the sender knows an input, where not by its own name.
+    unread : mapping of str to sequence of int
+        Samples at which something stands that is no number: they are told apart, not called missing.
 
     Returns
     -------
@@ -105,10 +109,12 @@ def judge(values: dict[str, Array], samples: int, labels: Mapping[str, str]) -> 
         if (smallest > low if term.above_lower_limit else smallest >= low) and largest <= high:
             continue
         missing = np.isnan(array)
+        if unread and name in unread and array.size == samples:
+            missing[list(unread[name])] = False
         label = labels.get(name, name)
         verdict.mark(_rows(missing, samples), MISSING, f"{label} is missing")
         within = (array > low if term.above_lower_limit else array >= low) & (array <= high)
-        impossible = ~within & ~missing
+        impossible = ~within & ~np.isnan(array)
         if impossible.any():
             _tell_impossible(verdict, label, term, _rows(impossible, samples), array)
             values[name] = np.where(impossible, np.nan, array)

@@ -316,7 +316,8 @@ def _methods(plans: Iterable[Plan]) -> dict[str, list[dict[str, Any]]]:
     told: dict[str, list[dict[str, Any]]] = {}
     for each in plans:
         for record in each.records:
-            own = record.method and ways_of(record.results[0], record.method)
+            of_transfer = _family_name(record) == TRANSFER_FAMILY
+            own = of_transfer and record.method and ways_of(record.results[0], record.method)
             if record.source is None and not own:
                 continue
             source = record.source

@@ -1,7 +1,7 @@
 """From what is known of the gas in the air and in the water to its fugacity on both sides of the interface."""
 
 from service.physics.constants import STANDARD_ATMOSPHERE
-from service.physics.declare import Array, derived, same_as, step
+from service.physics.declare import Array, Remark, derived, same_as, step
 
 # Air: mole fraction -> partial pressure -> fugacity; each way of giving the side enters at its own place.
 same_as("fugacity_in_air", "air_fugacity", way="air_fugacity")
@@ -110,7 +110,24 @@ def fugacity_in_water(partial_pressure_in_water: Array, fugacity_coefficient_in_
     return partial_pressure_in_water * fugacity_coefficient_in_water
 
 
-@step("fugacity_in_water", way="water_concentration", formula="f = C / K0", in_situ=True)
+TOTAL_CARBON = 500.0  # umol kg-1 or umol L-1, above which dissolved CO2 alone is rare and total carbon likely
+
+
+def _likely_total_carbon(concentration: str) -> Remark:
+    return Remark(
+        f"{concentration} above {TOTAL_CARBON:g} is likely total carbon: CO2(aq) + H2CO3 is meant",
+        ("reacts_with_water", concentration),
+        lambda reacts, amount: (reacts > 0.0) & (amount > TOTAL_CARBON),
+    )
+
+
+@step(
+    "fugacity_in_water",
+    way="water_concentration",
+    formula="f = C / K0",
+    in_situ=True,
+    remarks=(_likely_total_carbon("water_concentration"),),
+)
 def fugacity_from_concentration(water_concentration: Array, solubility: Array) -> Array:
     """Return the fugacity in the water from the concentration per kilogram.
 
@@ -129,7 +146,13 @@ def fugacity_from_concentration(water_concentration: Array, solubility: Array) -
     return water_concentration / solubility
 
 
-@step("fugacity_in_water", way="water_concentration_per_litre", formula="f = C / K0", in_situ=True)
+@step(
+    "fugacity_in_water",
+    way="water_concentration_per_litre",
+    formula="f = C / K0",
+    in_situ=True,
+    remarks=(_likely_total_carbon("water_concentration_per_litre"),),
+)
 def fugacity_from_concentration_per_litre(water_concentration_per_litre: Array, solubility_per_litre: Array) -> Array:
     """Return the fugacity in the water from the concentration per litre.
 

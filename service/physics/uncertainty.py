@@ -186,7 +186,7 @@ def _supplied(doubt: Doubt) -> Uncertainty | None:
     return Uncertainty(doubt.unpublished / 100.0, True, "supplied by the caller", stated)
 
 
-def _part(plan: Plan, known: Mapping[str, Array], keys: Sequence[str], name: str, u: Array) -> dict[str, Array]:
+def _part(plan: Plan, known: Mapping[str, Array], keys: Sequence[str], name: str, uncertainty: Array) -> dict[str, Array]:
     """Return derivative times uncertainty of one input, one-sided at the limits of the possible."""
     term, value = TERMS[name], known[name]
     low, high = term.possible
@@ -197,7 +197,7 @@ def _part(plan: Plan, known: Mapping[str, Array], keys: Sequence[str], name: str
     up, down = rerun(plan, known, {name: above}), rerun(plan, known, {name: below})
     width = above - below
     with np.errstate(all="ignore"):
-        return {key: (up[key] - down[key]) / width * u for key in keys}
+        return {key: (up[key] - down[key]) / width * uncertainty for key in keys}
 
 
 def _method_part(

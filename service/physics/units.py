@@ -190,7 +190,8 @@ _WORDS = """kn knot knots kt kts; km/h kph kmh; mph mph mi/h; ft3/s cfs; % perce
     degC celsius degc deg_c degree_c degrees_c degree_celsius degrees_celsius deg_celsius
     degF fahrenheit degf deg_f degree_f degrees_f degree_fahrenheit degrees_fahrenheit deg_fahrenheit
     s sec secs second seconds; min mins minute minutes; h hr hrs hour hours; d day days; month month months
-    yr year years yrs; ft foot feet; in inch inches"""  # in any case
+    yr year years yrs; ft foot feet; in inch inches; d-1 1/d 1/day per_day; h-1 1/h; min-1 1/min
+    s-1 1/s; month-1 1/month; yr-1 1/yr"""  # in any case
 _NAMES = "mol mol; mol mole; g gram; L litre; L liter; m metre; m meter; Pa pascal; bar bar; atm atmosphere"
 _PREFIX_NAMES = ("kilo", "hecto", "", "deci", "centi", "milli", "micro", "nano", "pico")
 _READ_EXACTLY = {"": "1"} | {spelling: unit for unit, *spellings in _rows(_SYMBOLS) for spelling in spellings}
@@ -263,8 +264,7 @@ def _read(text: str) -> str | None:
 
 def dimension_of(unit: str) -> str | None:
     """Return the dimension of a unit: the first of which it is the base, else the first that has it."""
-    spelling = canonical(unit)
-    return None if spelling is None else _HOME[spelling]
+    return _HOME.get(canonical(unit) or "")
 
 
 class _Reading(NamedTuple):
@@ -397,5 +397,5 @@ def listing() -> list[dict[str, Any]]:
 def _slashed(unit: str) -> list[str]:
     above = " ".join(part for part in unit.split() if "-" not in part)
     below = [part.removesuffix("-1").replace("-", "") for part in unit.split() if "-" in part]
-    forms = [unit, "/".join([above, *below]), *([f"{above}/({' '.join(below)})"] if len(below) > 1 else [])]
+    forms = [unit, "/".join([above or "1", *below]), *([f"{above}/({' '.join(below)})"] if len(below) > 1 else [])]
     return forms + [re.sub(r"\bu(?=mol|atm|bar|g|L|eq)", "µ", form) for form in forms]

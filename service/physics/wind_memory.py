@@ -35,7 +35,7 @@ REACH = 500.0  # e-foldings that one scan spans: exp(500) times any number of da
 REMEMBERED = 4.6  # exchanges after which 99 percent of the layer has been ventilated
 
 SHORT_MEMORY = Remark(
-    "the series reaches back less than the memory of 60 d, and less than 99 % of the layer has been ventilated in it",
+    "the series reaches back less than the memory of 60 d and less than 99 % of the layer was ventilated in that time",
     ("memory_length", "memory_exchange"),
     lambda length, exchange: (length < MEMORY) & (exchange < REMEMBERED),
 )

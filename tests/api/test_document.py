@@ -16,7 +16,7 @@ from schemas.options import Choice
 from schemas.parameters import units_of
 from schemas.requests import SAMPLES_LIMIT, load
 from schemas.samples import Text
-from schemas.vocabulary import quantity_inputs, request_fields
+from schemas.vocabulary import quantity_inputs, request_fields, uncertain_inputs
 from service import catalogue
 from service.app import create_app
 from service.config import Config
@@ -151,7 +151,7 @@ def test_the_uncertainty_of_every_input_is_there(quantity: Any) -> None:
     in_query = parameters(quantity.name)
     body = DOCUMENT["components"]["schemas"][f"Request.{quantity.name}"]
 
-    for name in quantity_inputs(quantity):
+    for name in uncertain_inputs(quantity):
         told = in_query[f"u_{name}"]
         assert told["x-uncertainty-of"] == name
         assert told["x-unit"] == in_query[name]["x-unit"]

@@ -1,122 +1,22 @@
-"""The logger bridge: what it makes of a log, and that nothing is lost or doubled whatever happens to it."""
+"""The logger bridge: what it makes of a log, a serial port and datagrams."""
 
-import csv
-import io
-import json
 import os
-import random
-import re
 import socket
 import subprocess
 import sys
-from collections.abc import Iterator
 from datetime import UTC, datetime, timedelta
 from functools import partial
 from pathlib import Path
 
 import pytest
 
-from tests.clients.running import (
-    ENVIRONMENT,
-    EXAMPLES,
-    PATIENCE,
-    Relay,
-    Service,
-    free_port,
-    stopped_at_the_end,
-    until,
-)
+from tests.clients.running import ENVIRONMENT, PATIENCE, free_port, stopped_at_the_end, until
+from tests.clients.shipboard import SAMPLE, SHIPBOARD, bridge, command, log, rows, sentence, ship, tables, waiting
 
 pytest.importorskip("pynmea2", reason="the bridge needs pynmea2: pip install -r examples/shipboard/requirements.txt")
 pytest.importorskip("serial", reason="the bridge needs pyserial: pip install -r examples/shipboard/requirements.txt")
 
 pytestmark = pytest.mark.clients
-SHIPBOARD = EXAMPLES / "shipboard"
-SAMPLE = SHIPBOARD / "sample.log"
-BEGIN = datetime(2024, 4, 16, 12, 0, tzinfo=UTC)
-KILLED = -9
-
-Table = dict[str, bytes]
-
-
-def command(url: str, data: Path, *more: str | Path) -> list[str]:
-    told = more or (SAMPLE,)
-    return [sys.executable, str(SHIPBOARD / "bridge.py"), "--url", url, "--data", str(data), *map(str, told)]
-
-
-def bridge(url: str, data: Path, *more: str | Path) -> "subprocess.CompletedProcess[str]":
-    return subprocess.run(
-        command(url, data, *more), capture_output=True, text=True, timeout=PATIENCE, check=False, env=ENVIRONMENT
-    )
-
-
-def tables(data: Path) -> Table:
-    return {path.name: path.read_bytes() for path in sorted(data.glob("flux_*.csv"))}
-
-
-def rows(data: Path) -> list[dict[str, str]]:
-    """Return the rows of all days under names without units."""
-    found = []
-    for text in tables(data).values():
-        lines = csv.reader(io.StringIO(text.decode(), newline=""))
-        names = [name.partition(" [")[0] for name in next(lines)]
-        found += [dict(zip(names, cells, strict=True)) for cells in lines]
-    return found
-
-
-def waiting(data: Path) -> int:
-    queue = data / "queue.jsonl"
-    return sum("row" in json.loads(line) for line in queue.read_text().splitlines()) if queue.exists() else 0
-
-
-def ship(folder: Path, interval: int, **question: str) -> Path:
-    """Return a description like the one that comes with the bridge, with another interval."""
-    text = re.sub(r"(?m)^interval = \d+", f"interval = {interval}", (SHIPBOARD / "ship.toml").read_text())
-    for name, value in question.items():
-        text = re.sub(rf'(?m)^{name} = "\w+"', f'{name} = "{value}"', text)
-    path = folder / f"ship_{interval}.toml"
-    path.write_text(text)
-    return path
-
-
-def sentence(body: str) -> str:
-    checksum = 0
-    for character in body:
-        checksum ^= ord(character)
-    return f"${body}*{checksum:02X}"
-
-
-def log(folder: Path, *lines: str) -> Path:
-    """Return a log of lines one second apart."""
-    path = folder / "written.log"
-    path.write_text(
-        "".join(f"{BEGIN + timedelta(seconds=place):%Y-%m-%dT%H:%M:%S}Z {line}\n" for place, line in enumerate(lines))
-    )
-    return path
-
-
-@pytest.fixture(scope="module")
-def undisturbed(service: str, tmp_path_factory: pytest.TempPathFactory) -> Path:
-    data = tmp_path_factory.mktemp("undisturbed")
-    done = bridge(service, data)
-    assert done.returncode == 0, done.stderr
-    return data
-
-
-@pytest.fixture(scope="module")
-def finely(service: str, tmp_path_factory: pytest.TempPathFactory) -> Path:
-    """Return the tables of the sample at intervals of five seconds."""
-    data = tmp_path_factory.mktemp("finely")
-    done = bridge(service, data, SAMPLE, "--ship", ship(data, 5))
-    assert done.returncode == 0, done.stderr
-    return data
-
-
-@pytest.fixture
-def own_service(tmp_path: Path) -> Iterator[Service]:
-    running = Service(tmp_path / "service.log")
-    yield running
-    running.stop()
 
 
 def test_the_generator_writes_the_log_that_is_kept(tmp_path: Path) -> None:
@@ -174,138 +74,6 @@ def test_run_again_it_adds_nothing(service: str, undisturbed: Path) -> None:
 
     assert done.returncode == 0
     assert tables(undisturbed) == before
-
-
-@pytest.mark.parametrize("seed", range(3))
-def test_killed_at_random_moments_it_writes_every_interval_once(
-    service: str, finely: Path, tmp_path: Path, seed: int
-) -> None:
-    moments = random.Random(seed)
-    description = ship(tmp_path, 5)
-    kills = 0
-    while True:
-        process = subprocess.Popen(
-            command(service, tmp_path, SAMPLE, "--ship", description), stderr=subprocess.DEVNULL, env=ENVIRONMENT
-        )
-        with stopped_at_the_end(process):
-            try:
-                status = process.wait(moments.uniform(0.15, 0.25 + 0.03 * kills))
-            except subprocess.TimeoutExpired:
-                kills += 1
-                continue
-        break
-
-    assert status == 0
-    assert kills >= 3
-    assert tables(tmp_path) == tables(finely)
-    assert waiting(tmp_path) == 0
-
-
-KILL_AT = """
-import os, runpy, signal, sys
-left = int(sys.argv.pop(1))
-def counted(name):
-    real = getattr(os, name)
-    def call(*arguments):
-        global left
-        left -= 1
-        if left == 0:
-            if name == "write":
-                real(arguments[0], bytes(arguments[1])[: len(arguments[1]) // 2])
-            os.kill(os.getpid(), signal.SIGKILL)
-        return real(*arguments)
-    setattr(os, name, call)
-for name in ("write", "fsync", "replace", "open", "truncate"):
-    counted(name)
-sys.path.insert(0, os.path.dirname(sys.argv[1]))
-sys.argv.pop(0)
-runpy.run_path(sys.argv[0], run_name="__main__")
-"""
-
-
-def test_killed_at_each_of_its_steps_on_the_disk_it_writes_every_interval_once(service: str, tmp_path: Path) -> None:
-    """A write is cut in the middle. Each kill is followed by a whole run, into a folder of its own."""
-    description = ship(tmp_path, 300)
-    bridge(service, tmp_path / "whole", SAMPLE, "--ship", description)
-    expected = tables(tmp_path / "whole")
-    killed = 0
-    while True:
-        data = tmp_path / f"killed_{killed + 1}"
-        _, script, *more = command(service, data, SAMPLE, "--ship", description)
-        wrapped = [sys.executable, "-c", KILL_AT, str(killed + 1), script, *more]
-        status = subprocess.run(wrapped, capture_output=True, timeout=PATIENCE, check=False, env=ENVIRONMENT).returncode
-        if status == 0:
-            break
-        killed += 1
-
-        assert status == KILLED
-        assert bridge(service, data, SAMPLE, "--ship", description).returncode == 0
-        assert tables(data) == expected
-        assert waiting(data) == 0
-    assert killed >= 20  # four intervals in the queue, two tables, the queue exchanged
-
-
-def test_without_a_service_intervals_wait_and_are_sent_in_one_batch_later(
-    own_service: Service, undisturbed: Path, tmp_path: Path
-) -> None:
-    first = bridge(own_service.url, tmp_path)
-    kept = waiting(tmp_path)
-    own_service.start()
-    with Relay(own_service.url).running() as relay:
-        second = bridge(relay.url, tmp_path)
-
-    assert (first.returncode, kept) == (3, 15)
-    assert "no answer" in first.stderr
-    assert second.returncode == 0
-    assert relay.requests.count(("POST", "/v1/flux")) == 1
-    assert tables(tmp_path) == tables(undisturbed)
-
-
-def goes_on(data: Path, answered: list[dict[str, str]], queued: int, is_up: bool) -> bool:
-    return len(rows(data)) > len(answered) if is_up else waiting(data) > queued
-
-
-def test_a_log_that_grows_while_the_service_stops_and_starts_and_the_bridge_is_killed_loses_nothing(
-    own_service: Service, finely: Path, tmp_path: Path
-) -> None:
-    growing, description = tmp_path / "sample.log", ship(tmp_path, 5)
-    lines = SAMPLE.read_bytes().splitlines(keepends=True)
-    arguments = command(own_service.url, tmp_path, growing, "--follow", "--ship", description)
-    growing.write_bytes(b"")
-    chance = random.Random(7)
-    stages = 8
-    for stage in range(stages):
-        if stage in (0, 5):
-            own_service.start()
-        if stage == 2:
-            own_service.stop()
-        part = lines[len(lines) * stage // stages : len(lines) * (stage + 1) // stages]
-        with stopped_at_the_end(subprocess.Popen(arguments, stderr=subprocess.DEVNULL, env=ENVIRONMENT)) as process:
-            with growing.open("ab") as file:
-                for line in part:
-                    place = chance.randrange(len(line))
-                    file.write(line[:place])
-                    file.flush()
-                    file.write(line[place:])
-            until(partial(goes_on, tmp_path, rows(tmp_path), waiting(tmp_path), stage not in (2, 3, 4)))
-            assert process.poll() is None
-    done = bridge(own_service.url, tmp_path, growing, "--ship", description)
-
-    assert done.returncode == 0
-    assert tables(tmp_path) == tables(finely)
-
-
-@pytest.mark.parametrize("fault", ["503", "drop", "cut"])
-def test_half_an_answer_or_none_is_asked_for_again(service: str, undisturbed: Path, tmp_path: Path, fault: str) -> None:
-    with Relay(service).running() as relay:
-        relay.faults = [fault]
-        first = bridge(relay.url, tmp_path)
-        between = tables(tmp_path)
-        second = bridge(relay.url, tmp_path)
-
-    assert (first.returncode, between) == (3, {})
-    assert second.returncode == 0
-    assert tables(tmp_path) == tables(undisturbed)
 
 
 def test_a_refused_question_is_told_and_nothing_is_lost_until_it_is_mended(
@@ -389,6 +157,22 @@ def test_a_clock_set_back_makes_no_interval_twice(service: str, tmp_path: Path) 
 
     assert [row["time"][14:16] for row in rows(tmp_path)] == ["00", "01", "02"]
     assert "120 lines" in done.stderr
+
+
+def test_lines_that_come_after_their_interval_was_written_are_left_out_and_counted(
+    service: str, tmp_path: Path
+) -> None:
+    """The first run ends the minute with the log; a minute once written stays as it is."""
+    path = log(tmp_path, *[sentence("YXMTW,12.40,C")] * 50)
+    lines = path.read_text().splitlines(keepends=True)
+    path.write_text("".join(lines[:40]))
+    bridge(service, tmp_path, path)
+    written = tables(tmp_path)
+    path.write_text("".join(lines))
+    done = bridge(service, tmp_path, path)
+
+    assert tables(tmp_path) == written
+    assert "10 lines" in done.stderr
 
 
 def test_a_second_bridge_on_the_same_folder_is_turned_away(service: str, tmp_path: Path) -> None:

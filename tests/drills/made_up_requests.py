@@ -20,7 +20,7 @@ def without_rivals(wanted: Mapping[str, Any], sent: Mapping[str, Any], sides: li
 
 
 @schemathesis.hook
-def before_call(_: HookContext, case: Case, __: dict[str, Any]) -> None:
+def before_call(_: HookContext, case: "Case[Any]", __: dict[str, Any]) -> None:
     """Add the inputs of the first example that are not there, so that more questions come as far as an answer.
 
     The gas is left alone in a query: without it a request is wrong, and meant to be.

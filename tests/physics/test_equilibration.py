@@ -5,7 +5,7 @@ import math
 import numpy as np
 import pytest
 
-from service.physics.equilibration import equilibration_time, half_time, time_to_fraction
+from service.physics.equilibration import equilibration_rate, equilibration_time, half_time, time_to_fraction
 from service.physics.judge import BAD
 from tests.properties.questions import ask_and_answer
 
@@ -13,8 +13,11 @@ ONE = np.array([1.0])
 
 
 def tau(k: float, h: float, open_water: float = 1.0, storage: float = 1.0, decay: float = 0.0) -> float:
-    depth, share, velocity, ratio, decays = (np.array([value]) for value in (h, open_water, k, storage, decay))
-    return float(equilibration_time(depth, share, velocity, ratio, decays)[0])
+    depth, share, velocity, ratio, decays, no_ventilation = (
+        np.array([value]) for value in (h, open_water, k, storage, decay, 0.0)
+    )
+    rate = equilibration_rate(depth, share, velocity, ratio, decays, no_ventilation)
+    return float(equilibration_time(rate)[0])
 
 
 def test_20_cm_per_hour_over_40_m_is_8_days_and_a_third() -> None:
@@ -58,11 +61,18 @@ def test_the_time_to_95_percent_is_three_times_the_e_folding_time() -> None:
     assert time_to_fraction(ONE, np.array([0.95]))[0] == pytest.approx(3.0, abs=0.005)  # rule of thumb, ln 20
 
 
-def test_a_missing_depth_spoils_no_other_sample() -> None:
-    found = equilibration_time(np.array([40.0, np.nan]), ONE, np.array([20.0]), ONE, np.array([0.0]))
+def test_a_gas_that_decays_is_gone_sooner() -> None:
+    per_day = math.log(2.0) / 3.8232  # radon-222 has a half-life of 3.8232 d, handbook
+    time = tau(k=20.0, h=40.0, decay=per_day / 86400.0)
 
-    assert found[0] == tau(k=20.0, h=40.0)
-    assert np.isnan(found[1])
+    assert 1.0 / time == pytest.approx(1.0 / tau(k=20.0, h=40.0) + per_day, rel=1e-13)
+
+
+def test_a_missing_depth_spoils_no_other_sample() -> None:
+    layer = {**LAYER, "wind_speed": 8.0, "mixed_layer_depth": np.array([40.0, np.nan])}
+    found = ask_and_answer("equilibration", "o2", layer).outcome.results["equilibration_time"]
+
+    assert np.isnan(found).tolist() == [False, True]
 
 
 LAYER: dict[str, float | np.ndarray] = {"water_temperature": 12.0, "salinity": 35.0, "mixed_layer_depth": 40.0}

@@ -42,6 +42,7 @@ OPEN_SEA: dict[str, Limits] = {  # where people measure; a law is tried within, 
 }
 
 
+NOT_OF_SAMPLES = {"series", "course"}  # what a term can hold that joins the samples of a request to one another
 OF_SAMPLES = [name for name, record in QUANTITIES.items() if not record.series]  # each sample stands for itself
 
 
@@ -107,7 +108,8 @@ def compute(wanted: str | Iterable[str], chosen: Mapping[str, str], gas: str, va
 
 def inputs_for(quantity: Quantity, gas: Gas, chosen: Mapping[str, str], given: Iterable[str] = ()) -> list[str]:
     """Return inputs that suffice for the main results of a quantity."""
-    wanted = tuple(name for name in quantity.results if TERMS[name].holds != "course")
+    courses = {side for side, each in SIDES.items() if {TERMS[name].holds for name in each.members} & NOT_OF_SAMPLES}
+    wanted = tuple(name for name in quantity.results if quantity.needs_side.get(name) not in courses)
     steps = sufficient(wanted, tuple(sorted(chosen.items())), gas.name, tuple(sorted(given)))
     return [name for name in steps.leaves if name not in steps.defaults or name in OPEN_SEA]
 

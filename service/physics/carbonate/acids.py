@@ -40,7 +40,7 @@ def lee_2010(salinity: Array) -> Array:
 
     Notes
     -----
-    The default: 139 samples of the open sea against the 20 of Uppstrom (1974), and the ratio that synthesis products
+    The default: 139 samples of the open sea against 20 (from memory), and the ratio that synthesis products
     now use. It is 4 percent higher; from alkalinity and total carbon in surface sea water that makes the fugacity
     higher by about 1.5 percent. NaN in, NaN out.
 
@@ -328,9 +328,4 @@ def silicic_acid_constant(water_temperature: Array, salinity: Array) -> Array:
     T, strength = water_temperature + ZERO_CELSIUS, _ionic_strength(salinity)
     pure = -8904.2 / T + 117.385 - 19.334 * np.log(T)
     of_strength = 188.74 / T - 1.5998 + (-12.1652 / T + 0.07871) * strength
-    return np.exp(
-        pure
-        + (-458.79 / T + 3.5913) * np.sqrt(strength)
-        + of_strength * strength
-        + _per_solution(salinity)
-    )
+    return np.exp(pure + (-458.79 / T + 3.5913) * np.sqrt(strength) + of_strength * strength + _per_solution(salinity))

@@ -183,9 +183,7 @@ def _outside(limits: tuple[float, float], temperature: Array) -> NDArray[np.bool
         Remark(
             "millero-2010, the carbonate constants of brackish water, hold from 0 to 50 degC",
             ("salinity", "water_temperature"),
-            lambda S, temperature: (
-                (S >= FRESH_BELOW) & (S < SEA_FROM) & _outside(MILLERO_TEMPERATURES, temperature)
-            ),
+            lambda S, temperature: (S >= FRESH_BELOW) & (S < SEA_FROM) & _outside(MILLERO_TEMPERATURES, temperature),
         ),
     ),
     note="Steps at the two limits. At salinity 19, from 2 to 35 degC, pK1 falls by 0.010 to 0.014 and pK2 by 0.009 to "
