@@ -4,7 +4,7 @@ from collections.abc import Mapping
 from typing import Any
 
 from schemas.vocabulary import request_fields
-from service.physics.declare import FAMILIES, Quantity
+from service.physics.declare import FAMILIES, TERMS, Quantity
 from service.physics.faults import CODES
 from service.physics.judge import BAD, GOOD, MISSING, SUSPECT
 from service.physics.question import known_names
@@ -15,6 +15,7 @@ Statuses = Mapping[int, tuple[str, str]]
 TEXT = {"type": "string"}
 TEXT_OR_NONE = {"type": ["string", "null"]}
 NUMBERS = {"type": "array", "items": {"type": ["number", "null"]}}
+OF_SAMPLES = {"type": "array", "items": {"type": ["number", "null", "array"], "items": {"type": ["number", "null"]}}}
 PROBLEM = "application/problem+json"
 FLAGS = {
     GOOD: "good",
@@ -58,13 +59,32 @@ def answer_schemas() -> dict[str, Described]:
     return {
         "Result": record(
             {
-                "values": NUMBERS | {"description": "One per sample; null where there is no result."},
+                "values": OF_SAMPLES
+                | {"description": "One per sample, of a course one list per sample; null where there is no result."},
                 "unit": TEXT,
                 "mass_of": TEXT | {"description": "Formula or symbol of what a mass is the mass of."},
                 "standard_name": TEXT_OR_NONE | {"description": "CF standard name, where there is one."},
-                "spread": NUMBERS | {"description": "Sample standard deviation over the parameterisations."},
+                "spread": OF_SAMPLES | {"description": "Sample standard deviation over the parameterisations."},
+                "u": OF_SAMPLES | {"description": "Standard uncertainty; null where a method publishes none."},
+                "u_inputs": OF_SAMPLES | {"description": "That from the inputs alone."},
+                "u_total": OF_SAMPLES | {"description": "That within the parameterisations and between them."},
+                "budget": map_of(OF_SAMPLES) | {"description": "Share of each input and method in u squared."},
+                "interval": record({"low": OF_SAMPLES, "high": OF_SAMPLES}, description="Coverage interval."),
             },
-            optional=("mass_of", "spread"),
+            optional=("mass_of", "spread", "u", "u_inputs", "u_total", "budget", "interval"),
+        ),
+        "Summary": record(
+            {
+                "rule": TEXT | {"description": "How mean and integral are taken."},
+                "results": map_of({"type": "object"})
+                | {"description": "Mean, integral, with an area amount and mass, each with unit and uncertainty."},
+                "samples": {"type": "integer"},
+                "left_out": {"type": "integer"},
+                "fraction_covered": {"type": ["number", "null"]},
+                "gaps": {"type": "integer"},
+            },
+            optional=("samples", "left_out", "fraction_covered", "gaps"),
+            description="Of a series; with several parameterisations their mean, and each by its name.",
         ),
         "Quality": record(
             {
@@ -107,17 +127,26 @@ def answer_schema(quantity: Quantity) -> Described:
         "by_parameterisation": map_of(outcome)
         | {"description": "Each method's own outcome; the outer results are their mean, with its spread."}
     }
+    told = request_fields(quantity)
+    series = {"time": {"description": "As it was sent."}}
+    if "summary" in told:
+        series["summary"] = schema("Summary")
+    course = {"times": record({"values": NUMBERS, "unit": TEXT}, description="Of the course, in days.")}
     properties: Described = {
         "quantity": {"const": quantity.name},
         **({"gas": TEXT} if quantity.of_gas else {}),
         "samples": {"type": "integer", "minimum": 1},
+        **(course if any(TERMS[name].holds == "course" for name in told if name in TERMS) else {}),
         **outcome["properties"],
+        **series,
+        "uncertainty": {"type": "object", "description": "How uncertainty was propagated, where it was asked for."},
         **(several if option in request_fields(quantity) else {}),
         "methods": map_of(list_of(schema("MethodUsed"))) | {"description": "By what they answer."},
         "assumed": map_of(schema("Assumed")),
         "service": schema("Service"),
     }
-    return record(properties, optional=("by_parameterisation", "methods", "assumed"), description=quantity.title)
+    optional = ("by_parameterisation", "methods", "assumed", "times", "time", "summary", "uncertainty")
+    return record(properties, optional=optional, description=quantity.title)
 
 
 def problem_schema(statuses: Statuses) -> Described:

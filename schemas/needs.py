@@ -11,9 +11,9 @@ from service.physics.engine import plan
 from service.physics.methods import (
     GIVEN,
     TRANSFER_FAMILY,
+    applicable,
     default_method,
     members_for,
-    methods_for_water,
     remarks_of,
     side_of,
 )
@@ -248,8 +248,7 @@ def two_parameterisations(quantity: Quantity, gas: Gas, inputs: Iterable[str]) -
     if family not in quantity_families(quantity):
         return []
     default = default_method(gas, family)
-    names = sorted(methods_for_water(gas, "ocean"), key=lambda name: name != default)
-    fit = [name for name in names if not plan_for(quantity, gas, inputs, [(family.name, name)], more=True).missing]
+    fit = sorted(applicable(gas, "ocean", tuple(inputs), None), key=lambda name: name != default)
     return fit[:2] if len(fit) > 1 else []
 
 

@@ -14,11 +14,16 @@ from service.compute import respond
 from service.config import Config, service_version
 from service.config import read as read_config
 from service.evidence import install as install_evidence
+from service.page.site import install_page
+from service.health import install as install_health
 from service.physics.declare import QUANTITIES, Quantity
 from service.physics.faults import Fault, Refused
+from service.places import Gate
 
 REQUEST_ID = re.compile(r"[A-Za-z0-9._-]{1,64}\Z", re.ASCII)
+NAMED, ROUTE = "catspaw.id", "catspaw.route"  # what the log and the counts are told
 COMPUTED = "no-store"
+NO_REFERRER = "no-referrer"
 QUERY_BYTES = 8190
 GUARDED = ("/v1", "/metrics")  # what a token guards
 
@@ -38,24 +43,28 @@ def create_app(config: Config | None = None) -> Flask:
     errors.install(app)
     app.before_request(_begin(settings))
     app.after_request(_finish(settings))
+    gate = Gate(settings)
     for quantity in QUANTITIES.values():
-        app.add_url_rule(f"/v1/{quantity.name}", quantity.name, _view(quantity, settings), methods=["GET", "POST"])
+        view = _view(quantity, settings, gate)
+        app.add_url_rule(f"/v1/{quantity.name}", quantity.name, view, methods=["GET", "POST"])
     install_catalogue(app, settings)
     install_evidence(app)
+    install_page(app, settings)
+    install_health(app)
     return app
 
 
-def _view(quantity: Quantity, config: Config) -> Callable[[], Response]:
+def _view(quantity: Quantity, config: Config, gate: Gate) -> Callable[[], Response]:
     def view() -> Response:
-        return respond(quantity, request, config)
+        return respond(quantity, request, config, gate)
 
     return view
 
 
 def _begin(config: Config) -> Callable[[], Response | None]:
     def begin() -> Response | None:
-        asked = request.headers.get("X-Request-ID", "")
-        g.request_id = asked if REQUEST_ID.match(asked) else secrets.token_hex(8)
+        g.request_id = request.environ[NAMED] = request_id(request.headers.get("X-Request-ID", ""))
+        request.environ[ROUTE] = request.url_rule.rule if request.url_rule else None
         if request.method == "OPTIONS":
             return _empty()
         if len(request.query_string) > QUERY_BYTES:
@@ -69,6 +78,11 @@ def _begin(config: Config) -> Callable[[], Response | None]:
         return None
 
     return begin
+
+
+def request_id(asked: str) -> str:
+    """Return the id that a request asks for where it is one, else a new one."""
+    return asked if REQUEST_ID.match(asked) else secrets.token_hex(8)
 
 
 def _check_encoding() -> None:
@@ -95,16 +109,15 @@ def _knows(token: str) -> bool:
 
 
 def _finish(config: Config) -> Callable[[Response], Response]:
-    version = service_version()
+    always = [("Catspaw-Version", service_version()), ("X-Content-Type-Options", "nosniff")]
+    if config.cors:
+        exposed = "Catspaw-Version, Catspaw-Assumed, Catspaw-Methods, X-Request-ID"
+        always += [("Access-Control-Allow-Origin", config.cors), ("Access-Control-Expose-Headers", exposed)]
 
     def finish(response: Response) -> Response:
         headers = response.headers
-        headers["Catspaw-Version"] = version
-        headers["X-Request-ID"] = g.get("request_id", "")
-        headers["X-Content-Type-Options"] = "nosniff"
+        headers.extend([*always, ("X-Request-ID", g.get("request_id", ""))])  # one call costs less than one a header
         if config.cors:
-            headers["Access-Control-Allow-Origin"] = config.cors
-            headers["Access-Control-Expose-Headers"] = "Catspaw-Version, Catspaw-Assumed, Catspaw-Methods, X-Request-ID"
             if request.method == "OPTIONS":
                 headers["Access-Control-Allow-Methods"] = "GET, HEAD, POST, OPTIONS"
                 headers["Access-Control-Allow-Headers"] = "Content-Type, Authorization, X-Request-ID"

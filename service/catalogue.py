@@ -12,6 +12,7 @@ from schemas.document import document
 from schemas.requests import SAMPLES_LIMIT
 from schemas.samples import NUMBER
 from schemas.vocabulary import quantity_inputs
+from service.bodies import RATIO
 from service.config import Config, service_version
 from service.errors import TYPES
 from service.physics import catalogue
@@ -21,6 +22,7 @@ from service.physics.methods import transfer_methods
 from service.physics.quantities import TRANSFER_VELOCITY
 from service.physics.terms import WATERS
 from service.physics.units import listing
+from service.places import SMALL_SAMPLES
 
 JSON = "application/json"
 LISTS = ("gases", "parameterisations", "sources", "units", "checks")
@@ -93,6 +95,10 @@ def limits(config: Config) -> dict[str, Any]:
         "cell_characters": 1000,
         "columns_used": 64,
         "columns_passed": 1024,
+        "unpacked_ratio": RATIO,
+        "large_samples": SMALL_SAMPLES,
+        "large_at_once": config.slots,
+        "wait_seconds": config.wait_seconds,
     }
 
 
@@ -164,12 +170,6 @@ def _views(config: Config) -> dict[str, Callable[..., Response]]:
         parameters(())
         return _told(openapi_bytes())
 
-    def healthz() -> Response:
-        return Response(b'{"status":"alive"}', mimetype=JSON)
-
-    def readyz() -> Response:
-        return Response(b'{"status":"ready"}', mimetype=JSON)
-
     return {
         "/v1": index,
         "/v1/gases": gases,
@@ -179,6 +179,4 @@ def _views(config: Config) -> dict[str, Callable[..., Response]]:
         "/v1/sources": sources,
         "/v1/units": units,
         "/openapi.json": openapi,
-        "/healthz": healthz,
-        "/readyz": readyz,
     }

@@ -26,17 +26,32 @@ from service.physics.declare import TERMS, Array, Quantity
 from service.physics.faults import Fault, Refused
 from service.physics.summary import Series
 from service.physics.sureness import Asked
+from service.places import SMALL_SAMPLES, Gate, Turn
 from service.readers import Sent, read, refused_table
 from service.summaries import summary_told
 
 FORMS = ("json", "csv", "number")
 CSV_TYPE, JSON_TYPE, NUMBER_TYPE = "text/csv; charset=utf-8", "application/json", "text/plain; charset=utf-8"
+MONTE_CARLO = "monte-carlo"
+SAMPLES = "catspaw.samples"  # what the log and the counts are told
 
 
-def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Response:
-    """Answer a request for a quantity."""
+def respond(quantity: Quantity, request: HttpRequest, config: Config, gate: Gate) -> Response:
+    """Answer a request for a quantity; a large one waits for its turn."""
+    with gate.turn() as turn:
+        response, checked = _answered(quantity, request, config, turn, gate)
+    if checked.options.get("detail") != "brief":
+        assumed, methods = writers.header_text(checked.question)
+        response.headers["Catspaw-Assumed"] = assumed
+        response.headers["Catspaw-Methods"] = methods
+    return response
+
+
+def _answered(
+    quantity: Quantity, request: HttpRequest, config: Config, turn: Turn, gate: Gate
+) -> tuple[Response, Request]:
     form = _form_asked(request)
-    sent = read(request, config)
+    sent = read(request, config, gate, turn)
     names = _column_names(quantity, sent.raw)
     raw = bind(sent.table.header, sent.raw, names) if sent.table else _without_columns(sent.raw)
     checked = load(quantity, raw)
@@ -44,6 +59,8 @@ def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Respons
     if checked.series and form != "json":
         reason = f"is told in JSON, not in {form}: send form=json"
         raise Refused(Fault("unknown_option", "summary", reason, "form=json"))
+    rows = sent.table.rows_at_most if sent.table else checked.samples
+    turn.large(rows > SMALL_SAMPLES or checked.options.get("uncertainty_method") == MONTE_CARLO)
     if sent.table is None:
         values = {each.term: each.values for each in checked.inputs if each.values is not None}
         with_steps = checked.options.get("detail") == "steps"
@@ -51,16 +68,14 @@ def respond(quantity: Quantity, request: HttpRequest, config: Config) -> Respons
         series = series_of(checked, checked.series.time.values) if checked.series else None
         told = answer(checked.question, values, checked.samples, with_steps=with_steps, asked=asked, series=series)
         response = _written(_strictly(told, checked), checked, form, asked, _more(told, checked, series, sent))
+        request.environ[SAMPLES] = checked.samples
     elif form == "csv":
-        response = _csv_behind(sent, checked, request)
+        response = _csv_behind(sent, checked, request, gate)
     else:
         told, series = _whole_table(sent, checked)
         response = _written(told, checked, form, _Columns(sent, checked).asked, _more(told, checked, series, sent))
-    if checked.options.get("detail") != "brief":
-        assumed, methods = writers.header_text(checked.question)
-        response.headers["Catspaw-Assumed"] = assumed
-        response.headers["Catspaw-Methods"] = methods
-    return response
+        request.environ[SAMPLES] = told.samples
+    return response, checked
 
 
 def _column_names(quantity: Quantity, sent: Mapping[str, Any]) -> list[str]:
@@ -244,7 +259,7 @@ class _Columns:
             raise refused_table(error) from error
 
 
-def _csv_behind(sent: Sent, checked: Request, request: HttpRequest) -> Response:
+def _csv_behind(sent: Sent, checked: Request, request: HttpRequest, gate: Gate) -> Response:
     """Answer a table with a table, block by block; everything that can be refused is refused with the first."""
     if sent.table is None:
         raise Refused(Fault("table", "csv", "is not there"))
@@ -262,7 +277,10 @@ def _csv_behind(sent: Sent, checked: Request, request: HttpRequest) -> Response:
     first = next(answers, None)
     missing = options.get("missing", "").encode()
 
+    environ = request.environ  # the request itself is gone before its last line is written
+
     def lines(block: Block, answered: Answer) -> bytes:
+        environ[SAMPLES] = environ.get(SAMPLES, 0) + answered.samples
         numbers, texts = writers.csv_columns(answered)
         return answer_lines(block, header.delimiter, numbers, texts, missing)
 
@@ -275,10 +293,21 @@ def _csv_behind(sent: Sent, checked: Request, request: HttpRequest) -> Response:
     parts = chain([head], (lines(block, each) for block, each in every))
     if request.environ.get("SERVER_PROTOCOL") == "HTTP/1.0":
         return Response(b"".join(parts), content_type=CSV_TYPE)
-    return Response(parts, content_type=CSV_TYPE)
+    return Response(_in_turns(parts, gate, sent.table.rows_at_most > SMALL_SAMPLES), content_type=CSV_TYPE)
 
 
-def _whole_table(sent: Sent, checked: Request) -> tuple[Answer, Series | None]:
+def _in_turns(parts: Iterator[bytes], gate: Gate, is_large: bool) -> Iterator[bytes]:
+    """Yield the parts of an answer, each made in a turn: a client that is slow to read them keeps nobody waiting."""
+    while True:
+        with gate.turn() as turn:
+            turn.large(is_large, patient=True)
+            part = next(parts, None)
+        if part is None:
+            return
+        yield part
+
+
+def _whole_table(sent: Sent, checked: Request) -> tuple[Answer, Series | None, Asked | None]:
     """Return the answer to a whole table at once, for forms that have no lines to stand behind, and its series."""
     gathered = _Columns(sent, checked)
     (block,) = joined(gathered.blocks)
@@ -292,7 +321,7 @@ def _whole_table(sent: Sent, checked: Request) -> tuple[Answer, Series | None]:
     answered = answer(
         checked.question, values, samples, gathered.unreadable(block), gathered.labels, asked=asked, series=series
     )
-    return _strictly(answered, checked, block.line_numbers), series
+    return _strictly(answered, checked, block.line_numbers), series, asked
 
 
 def _course(checked: Request) -> Array | None:

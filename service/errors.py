@@ -8,7 +8,9 @@ import orjson
 from flask import Flask, Response, g, request
 from werkzeug.exceptions import HTTPException
 
+from service.bodies import READ
 from service.physics.faults import Fault, Refused
+from service.places import Busy
 
 LISTED = 20  # errors told in one document; the rest are counted
 DOCUMENT_BYTES = 64 * 1024  # the longest problem document
@@ -19,13 +21,17 @@ TYPES = {
     401: ("unauthorised", "A token is needed"),
     404: ("not-found", "No such address"),
     405: ("method-not-allowed", "The address does not take this method"),
+    408: ("too-slow", "The request did not come in time"),
     413: ("too-large", "The request is larger than the limit"),
     414: ("too-long", "The address is longer than the limit"),
     415: ("media-type", "The content encoding is not read"),
+    417: ("expectation", "What the request expects cannot be met"),
     422: ("wrong", "The request is readable but wrong"),
+    431: ("headers", "The headers are larger than the limit"),
     500: ("internal", "A fault of the service"),
     503: ("busy", "The service is busy"),
 }
+PROBLEM = "application/problem+json"
 log = logging.getLogger("catspaw")
 
 
@@ -90,25 +96,45 @@ def problem(status: int, detail: str, faults: tuple[Fault, ...] = (), more: int 
     """Return a problem document, or one line of text where the caller asked for it."""
     if request.args.get("errors") == "text" and 400 <= status < 500 and status != 401:
         return Response(_line(detail, faults), 200, mimetype="text/plain")
+    body = document(status, detail, g.get("request_id", ""), faults, more)
+    return Response(body, status, mimetype=PROBLEM)
+
+
+def document(status: int, detail: str, instance: str, faults: tuple[Fault, ...] = (), more: int = 0) -> bytes:
+    """Return a problem document of bounded length.
+
+    Parameters
+    ----------
+    status : int
+        Of the answer.
+    detail : str
+        A sentence on what to do.
+    instance : str
+        The id of the request.
+    faults : tuple of Fault
+        What is wrong; the first are listed.
+    more : int
+        How many there are beside these.
+    """
     kind, title = TYPES.get(status, TYPES[500 if status >= 500 else 400])
-    document: dict[str, Any] = {
+    head: dict[str, Any] = {
         "type": f"/reference#{kind}",
         "title": title,
         "status": status,
         "detail": detail,
-        "instance": g.get("request_id", ""),
+        "instance": instance,
     }
     told = [_told(fault) for fault in faults[:LISTED]]
-    body = _document(document, told, more + len(faults) - len(told))
+    body = _document(head, told, more + len(faults) - len(told))
     while len(body) > DOCUMENT_BYTES:
         told.pop()
-        body = _document(document, told, more + len(faults) - len(told))
-    return Response(body, status, mimetype="application/problem+json")
+        body = _document(head, told, more + len(faults) - len(told))
+    return body
 
 
-def _document(document: dict[str, Any], told: list[dict[str, Any]], more: int) -> bytes:
+def _document(head: dict[str, Any], told: list[dict[str, Any]], more: int) -> bytes:
     listed: dict[str, Any] = {"errors": told} if told else {}
-    return orjson.dumps(document | listed | ({"more": more} if more else {}))
+    return orjson.dumps(head | listed | ({"more": more} if more else {}))
 
 
 def _line(detail: str, faults: tuple[Fault, ...]) -> str:
@@ -137,7 +163,14 @@ def install(app: Flask) -> None:
             return problem(error.status, error.detail, error.faults, error.more)
         answer = problem(error.status, sentence(error.faults), error.faults)
         if error.status == 415:
-            answer.headers["Accept-Encoding"] = "identity"
+            answer.headers["Accept-Encoding"] = READ
+        return answer
+
+    @app.errorhandler(Busy)
+    def busy(error: Busy) -> Response:
+        reason = f"waited {error.seconds} s for {error.what}: send the same request again later"
+        answer = problem(503, f"request {reason}", (Fault("busy", "request", reason),))
+        answer.headers["Retry-After"] = str(error.seconds)
         return answer
 
     @app.errorhandler(HTTPException)

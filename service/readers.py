@@ -4,19 +4,21 @@ import json
 import re
 from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
+from io import BytesIO
 from typing import Any
 from urllib.parse import parse_qsl
 
 import orjson
 from flask import Request
-from gunicorn.http.errors import ParseException
 from werkzeug.datastructures import MultiDict
-from werkzeug.exceptions import ClientDisconnected
+from werkzeug.formparser import FormDataParser
 
 from schemas.samples import Text
+from service.bodies import read_body, too_large
 from service.config import Config
 from service.csv_table import Table, TableError, open_table
 from service.physics.faults import Fault, Refused
+from service.places import Gate, Turn
 
 TABLE_CODES = {
     "empty_body": "empty",
@@ -45,13 +47,15 @@ class Sent:
     table: Table | None = None
 
 
-def read(request: Request, config: Config) -> Sent:
+def read(request: Request, config: Config, gate: Gate, turn: Turn) -> Sent:
     """Return what a request holds.
 
     Raises
     ------
     Refused
         With 400, 413 or 415 where the body cannot be read, 422 where a name is repeated.
+    Busy
+        Where there is no place for a body as large.
     """
     query = _single(request.args, "query")
     _check_errors(query.get("errors"))
@@ -59,7 +63,7 @@ def read(request: Request, config: Config) -> Sent:
         query.pop(name, None)
     if request.method in ("GET", "HEAD"):
         return Sent("query", query)
-    body = _body(request, config)
+    body = read_body(request, config, gate, turn)
     if not body.strip():
         if query:
             return Sent("query", query)
@@ -89,42 +93,8 @@ def _check_errors(asked: str | None) -> None:
         raise Refused(Fault("unknown_option", "errors", f"must be one of {allowed}", allowed))
 
 
-def _body(request: Request, config: Config) -> bytes:
-    encoding = request.headers.get("Content-Encoding", "identity").strip().lower()
-    if encoding not in ("", "identity"):
-        raise Refused(
-            Fault(
-                "media_type",
-                "Content-Encoding",
-                f"{encoding[:40]!r} is not read: send the body as it is",
-                "identity",
-            ),
-            status=415,
-        )
-    limit = max(config.csv_bytes, config.json_bytes)
-    announced = request.content_length
-    if announced is not None and announced > limit:
-        raise _too_large(announced, limit)
-    try:
-        body = request.get_data(cache=True, parse_form_data=False)
-    except (OSError, ParseException, ClientDisconnected) as error:
-        told = f": {announced} bytes were announced" if announced is not None else ", or its chunks are wrong"
-        reason = f"could not be read to its end: it was cut short{told}"
-        raise Refused(Fault("cut_short", "body", reason), status=400) from error
-    if len(body) > limit:
-        raise _too_large(len(body), limit)
-    if announced is not None and len(body) < announced:
-        reason = f"was cut short: {announced} bytes announced, {len(body)} came"
-        raise Refused(Fault("cut_short", "body", reason), status=400)
-    return body
-
-
-def _too_large(size: int, limit: int) -> Refused:
-    return Refused(Fault("too_large", "body", f"of {size} bytes is over the limit", f"{limit} bytes"), status=413)
-
-
 def _recognise(request: Request, body: bytes, config: Config) -> Sent:
-    if request.mimetype == "multipart/form-data" and (found := _parts(request)):
+    if request.mimetype == "multipart/form-data" and (found := _parts(body, request, config)):
         return _from_form(found, config)
     if _is_json(body):
         return Sent("json", _from_json(body, config))
@@ -154,10 +124,14 @@ def _fields(body: bytes) -> dict[str, Any]:
     return _single(MultiDict(parse_qsl(text, keep_blank_values=True)), "form")
 
 
-def _parts(request: Request) -> dict[str, Any]:
+def _parts(body: bytes, request: Request, config: Config) -> dict[str, Any]:
     """Return the fields and files of a multipart body; none where it cannot be read."""
-    found = _single(request.form, "form")
-    for name, files in request.files.lists():
+    parser = FormDataParser(
+        max_form_memory_size=max(config.csv_bytes, config.json_bytes), max_form_parts=FIELDS_LIMIT
+    )
+    _, fields, uploads = parser.parse(BytesIO(body), request.mimetype, len(body), request.mimetype_params)
+    found = _single(fields, "form")
+    for name, files in uploads.lists():
         content = files[0].read()
         key = name if name in ("csv", "json") else "json" if _is_json(content) else "csv"
         if len(files) > 1 or key in found:
@@ -182,7 +156,7 @@ def _from_form(found: dict[str, Any], config: Config) -> Sent:
         return Sent("json", {**values, **found})
     size = sum(len(value) for value in found.values())
     if size > config.json_bytes:
-        raise _too_large(size, config.json_bytes)
+        raise too_large(size, config.json_bytes)
     return Sent("form", found)
 
 
@@ -192,7 +166,7 @@ def _bytes(part: str | bytes) -> bytes:
 
 def _from_csv(body: bytes, config: Config) -> Table:
     if len(body) > config.csv_bytes:
-        raise _too_large(len(body), config.csv_bytes)
+        raise too_large(len(body), config.csv_bytes)
     try:
         return open_table(body)
     except TableError as error:
@@ -207,7 +181,7 @@ def refused_table(error: TableError) -> Refused:
 
 def _from_json(body: bytes, config: Config) -> dict[str, Any]:
     if len(body) > config.json_bytes:
-        raise _too_large(len(body), config.json_bytes)
+        raise too_large(len(body), config.json_bytes)
     try:
         document = orjson.loads(body.removeprefix(b"\xef\xbb\xbf"))
     except orjson.JSONDecodeError as error:

@@ -39,9 +39,9 @@ class Service:
 
     def __init__(self, url: str, question: Mapping[str, str]) -> None:
         self.url, self.question = url.rstrip("/"), dict(question)
-        self._session = requests.Session()
+        self._headers = {"Content-Type": "text/csv", "Accept": "text/csv, application/json;q=0.5"}
         if token := os.environ.get("CATSPAW_TOKEN"):
-            self._session.headers["Authorization"] = f"Bearer {token}"
+            self._headers["Authorization"] = f"Bearer {token}"
 
     def flux(self, rows: Sequence[Row]) -> tuple[str, list[str]]:
         """Return the header and one line for each row, its own cells first.
@@ -85,10 +85,10 @@ class Service:
         return self._ask("POST", path, body.encode(), question).content.decode()
 
     def _ask(self, method: str, path: str, body: bytes, question: Mapping[str, str]) -> requests.Response:
-        headers = {"Content-Type": "text/csv", "Accept": "text/csv, application/json;q=0.5"}
         try:
-            answer = self._session.request(
-                method, self.url + path, params=question, data=body, headers=headers, timeout=PATIENCE
+            # Each on a connection of its own: one kept open since the last interval may be gone by now.
+            answer = requests.request(
+                method, self.url + path, params=question, data=body, headers=self._headers, timeout=PATIENCE
             )
         except requests.RequestException as error:
             raise Unavailable(f"no answer from {self.url}: {type(error).__name__}") from error

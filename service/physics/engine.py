@@ -134,10 +134,11 @@ def run(steps: Plan, values: Mapping[str, Array], shared: Shared | None = None) 
         for node in steps.nodes:
             arrays = [known[key] for key in node.arguments]
             called = (node.step, node.results, *map(id, arrays))
-            if shared is None or (outcome := shared.get(called)) is None:
+            _, outcome = (shared or {}).get(called, (None, None))
+            if outcome is None:
                 outcome = node.function(*arrays)
             if shared is not None:
-                shared[called] = outcome
+                shared[called] = arrays, outcome  # the arrays are kept, so that their identities stay theirs
             if len(node.results) == 1:
                 known[node.results[0]] = outcome
             else:

@@ -28,6 +28,7 @@ CODES = {
     "bad_sample": "a sample without a result, under strict=1",
     "not_found": "no such address or name",
     "method": "an HTTP method that the address does not take",
+    "busy": "no free place in time; the same request may be sent again",
     "internal": "a fault of the service",
 }
 

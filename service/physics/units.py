@@ -185,13 +185,12 @@ _SYMBOLS = """degC C; degF F; L l; mL ml cc; uL ul; nL nl; yr a; mbar mb mBar; d
     umol/mol 1e-6; nmol/mol 1e-9; pmol/mol 1e-12"""  # case matters
 _WORDS = """kn knot knots kt kts; km/h kph kmh; mph mph mi/h; ft3/s cfs; % percent pct; K kelvin degk
     psu psu pss pss-78; rad radian radians; ha hectare hectares; Torr torr; mmHg mmhg mm_hg; inHg inhg in_hg
-    umol/mol ppm ppmv; nmol/mol ppb ppbv; pmol/mol ppt pptv
+    umol/mol ppm ppmv; nmol/mol ppb ppbv; pmol/mol ppt pptv; s-1 1/s; month-1 1/month; yr-1 1/yr
     degree degree deg degrees degree_north degrees_north degree_east degrees_east
     degC celsius degc deg_c degree_c degrees_c degree_celsius degrees_celsius deg_celsius
     degF fahrenheit degf deg_f degree_f degrees_f degree_fahrenheit degrees_fahrenheit deg_fahrenheit
     s sec secs second seconds; min mins minute minutes; h hr hrs hour hours; d day days; month month months
-    yr year years yrs; ft foot feet; in inch inches; d-1 1/d 1/day per_day; h-1 1/h; min-1 1/min
-    s-1 1/s; month-1 1/month; yr-1 1/yr"""  # in any case
+    yr year years yrs; ft foot feet; in inch inches; d-1 1/d 1/day per_day; h-1 1/h; min-1 1/min"""  # in any case
 _NAMES = "mol mol; mol mole; g gram; L litre; L liter; m metre; m meter; Pa pascal; bar bar; atm atmosphere"
 _PREFIX_NAMES = ("kilo", "hecto", "", "deci", "centi", "milli", "micro", "nano", "pico")
 _READ_EXACTLY = {"": "1"} | {spelling: unit for unit, *spellings in _rows(_SYMBOLS) for spelling in spellings}

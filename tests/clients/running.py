@@ -105,6 +105,7 @@ class Relay:
                     self.send_response(503)
                     self.send_header("Retry-After", "0")
                     self.send_header("Content-Length", "0")
+                    self.send_header("Connection", "close")
                     self.end_headers()
                     return
                 connection = http.client.HTTPConnection("127.0.0.1", port, timeout=PATIENCE)
@@ -115,6 +116,7 @@ class Relay:
                 connection.close()
                 self.send_response(answer.status)
                 self.send_header("Content-Length", str(len(text)))
+                self.send_header("Connection", "close")
                 self.end_headers()
                 self.wfile.write(text[: len(text) // 2] if fault == "cut" else text)
 

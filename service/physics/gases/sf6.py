@@ -11,8 +11,6 @@ SF6 = gas(
         formula="SF6",
         title="sulphur hexafluoride",
         molar_mass=146.050,
-        element="S",
-        element_mass=32.06,
         defaults={
             "solubility": "bullister-2002",
             "schmidt_number": "wanninkhof-2014",

@@ -1,0 +1,99 @@
+"""What the page needs of the API document: its inputs, units, needs and results, told once and without the rest."""
+
+from collections.abc import Mapping
+from typing import Any
+
+from schemas.answers import FLAGS
+from schemas.parameters import Described
+from service.physics.catalogue import gas_record, parameterisations
+from service.physics.declare import GASES, QUANTITIES
+
+UNCERTAIN = "x-uncertainty-of"
+UNIT_OF_RESULT = "unit."
+EXAMPLE = "get"  # the question with which the page begins
+
+
+def resolved(document: Mapping[str, Any], node: Described) -> Described:
+    """Return what a reference of the document stands for, anything else as it is."""
+    if "$ref" not in node:
+        return node
+    found: Any = document
+    for part in node["$ref"].removeprefix("#/").split("/"):
+        found = found[part]
+    return dict(found)
+
+
+def parameters(document: Mapping[str, Any], path: str) -> dict[str, Described]:
+    """Return the query parameters of an address by name, in their order."""
+    listed = (resolved(document, each) for each in document["paths"][path].get("parameters", ()))
+    return {each["name"]: each for each in listed}
+
+
+def _about(parameter: Described) -> Described:
+    """Return a parameter without what the page does not read."""
+    schema = parameter["schema"]
+    told = {key.removeprefix("x-"): value for key, value in parameter.items() if key.startswith("x-")}
+    told["description"] = parameter.get("description", "")
+    if "example" in parameter:
+        told["example"] = parameter["example"]
+    if "default" in schema:
+        told["default"] = schema["default"]
+    if choices := parameter.get("x-choices", schema.get("enum")):
+        told["choices"] = choices
+    return told
+
+
+def described(document: Mapping[str, Any]) -> dict[str, Any]:
+    """Return what the page is built from.
+
+    Parameters
+    ----------
+    document : mapping
+        The OpenAPI document.
+
+    Returns
+    -------
+    dict
+        ``names`` holds each input and option that is the same wherever it is taken; ``quantities`` which of them a
+        quantity takes, and what it says otherwise.
+    """
+    names: dict[str, Described] = {}
+    quantities = {name: _quantity(document, name, names) for name in QUANTITIES}
+    return {
+        "version": document["info"]["version"],
+        "flags": {str(flag): meaning for flag, meaning in FLAGS.items()},
+        "limits": document["x-limits"],
+        "unit_lists": document["x-unit-lists"],
+        "gases": {gas.name: {"title": gas.title, "formula": gas_record(gas)["formula"]} for gas in GASES.values()},
+        "waters": {each["name"]: each["water"] for each in parameterisations(None, None, None, None)},
+        "names": names,
+        "quantities": quantities,
+    }
+
+
+def _quantity(document: Mapping[str, Any], name: str, names: dict[str, Described]) -> Described:
+    item, own, taken, doubted = document["paths"][f"/v1/{name}"], {}, [], []
+    units: dict[str, str] = {}
+    for parameter, about in parameters(document, f"/v1/{name}").items():
+        if UNCERTAIN in about:
+            doubted.append(about[UNCERTAIN])
+        elif parameter.startswith(UNIT_OF_RESULT):
+            units[parameter.removeprefix(UNIT_OF_RESULT)] = about["x-units"]
+        else:
+            taken.append(parameter)
+            if names.setdefault(parameter, _about(about)) != _about(about):
+                own[parameter] = _about(about)
+    return {
+        "title": QUANTITIES[name].title,
+        "address": f"/v1/{name}",
+        "takes": taken,
+        "own": own,
+        "uncertain": doubted,
+        "inputs": item["x-inputs"],
+        "sides": item["x-sides"],
+        "results": [
+            {**{key: each[key] for key in ("name", "unit", "meaning", "main")}, "units": units[each["name"]]}
+            for each in item["x-results"]
+        ],
+        "example": next((each["url"] for each in item["x-examples"] if each["name"] == EXAMPLE), ""),
+    }
