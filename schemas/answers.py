@@ -66,7 +66,7 @@ def answer_schemas() -> dict[str, Described]:
                 "standard_name": TEXT_OR_NONE | {"description": "CF standard name, where there is one."},
                 "spread": OF_SAMPLES | {"description": "Sample standard deviation over the parameterisations."},
                 "u": OF_SAMPLES | {"description": "Standard uncertainty; null where a method publishes none."},
-                "u_inputs": OF_SAMPLES | {"description": "That from the inputs alone."},
+                "u_inputs": OF_SAMPLES | {"description": "That from the inputs alone, where methods count too."},
                 "u_total": OF_SAMPLES | {"description": "That within the parameterisations and between them."},
                 "budget": map_of(OF_SAMPLES) | {"description": "Share of each input and method in u squared."},
                 "interval": record({"low": OF_SAMPLES, "high": OF_SAMPLES}, description="Coverage interval."),

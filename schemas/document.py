@@ -31,7 +31,7 @@ what can be tried."""
 TAGS = {
     "quantities": "What is computed.",
     "catalogue": "What there is: gases, methods, sources, units, checks.",
-    "service": "Whether the service is well.",
+    "service": "The page and its reference, and whether the service is well.",
 }
 URL_ONLY: tuple[Described, ...] = (
     {

@@ -1,9 +1,10 @@
 """The command: ``catspaw serve`` and ``catspaw check``; ``python -m service`` is the same."""
 
 import argparse
+import os
 import sys
 
-from service.config import Config, ConfigurationError, read, service_version
+from service.config import ConfigurationError, read, service_version
 
 
 def _parser() -> argparse.ArgumentParser:
@@ -12,7 +13,8 @@ def _parser() -> argparse.ArgumentParser:
     commands = parser.add_subparsers(dest="command")
     serve = commands.add_parser("serve", help="start the service (the default)")
     serve.add_argument("--bind", metavar="HOST:PORT", help="address to listen on (default 127.0.0.1:8660)")
-    serve.add_argument("--workers", type=int, metavar="N", help="worker processes (default 2)")
+    serve.add_argument("--workers", metavar="N", help="worker processes (default 2)")
+    serve.add_argument("--check", action="store_true", help="print the settings in force, and start nothing")
     check = commands.add_parser("check", help="recompute every published figure, and fail where one does not come out")
     check.add_argument("--gas", metavar="GAS", help="only the checks of this gas")
     check.add_argument("--method", metavar="METHOD", help="only the checks of this method")
@@ -27,14 +29,20 @@ def main(arguments: list[str] | None = None) -> int:
     options = _parser().parse_args(words)
     if options.command == "check":
         return _check(options)
+    asked = {"CATSPAW_BIND": options.bind, "CATSPAW_WORKERS": options.workers}
     try:
-        config = read()
+        config = read(os.environ | {name: value for name, value in asked.items() if value is not None})
     except ConfigurationError as error:
         print(f"catspaw: {error}", file=sys.stderr)
         return 2
-    from service.serve import serve
+    from service.serve import serve, warnings
 
-    return serve(_with(config, options))
+    for line in warnings(config):
+        print(f"catspaw: {line}", file=sys.stderr)
+    if options.check:
+        print("\n".join(f"{name}={value}" for name, value in config.told().items()))
+        return 0
+    return serve(config)
 
 
 def _check(options: argparse.Namespace) -> int:
@@ -48,16 +56,6 @@ def _check(options: argparse.Namespace) -> int:
         return 2
     print("\n".join(lines))
     return status
-
-
-def _with(config: Config, options: argparse.Namespace) -> Config:
-    from dataclasses import replace
-
-    if options.bind:
-        config = replace(config, bind=options.bind)
-    if options.workers:
-        config = replace(config, workers=options.workers)
-    return config
 
 
 if __name__ == "__main__":

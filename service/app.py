@@ -14,8 +14,8 @@ from service.compute import respond
 from service.config import Config, service_version
 from service.config import read as read_config
 from service.evidence import install as install_evidence
-from service.page.site import install_page
 from service.health import install as install_health
+from service.page.site import install_page
 from service.physics.declare import QUANTITIES, Quantity
 from service.physics.faults import Fault, Refused
 from service.places import Gate
@@ -117,12 +117,13 @@ def _finish(config: Config) -> Callable[[Response], Response]:
     def finish(response: Response) -> Response:
         headers = response.headers
         headers.extend([*always, ("X-Request-ID", g.get("request_id", ""))])  # one call costs less than one a header
-        if config.cors:
-            if request.method == "OPTIONS":
-                headers["Access-Control-Allow-Methods"] = "GET, HEAD, POST, OPTIONS"
-                headers["Access-Control-Allow-Headers"] = "Content-Type, Authorization, X-Request-ID"
+        if config.cors and request.method == "OPTIONS":
+            headers["Access-Control-Allow-Methods"] = "GET, HEAD, POST, OPTIONS"
+            headers["Access-Control-Allow-Headers"] = "Content-Type, Authorization, X-Request-ID"
         if "Cache-Control" not in headers:
             headers["Cache-Control"] = COMPUTED
+        if "Referrer-Policy" not in headers:
+            headers["Referrer-Policy"] = NO_REFERRER
         return response
 
     return finish

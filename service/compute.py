@@ -59,11 +59,14 @@ def _answered(
     if checked.series and form != "json":
         reason = f"is told in JSON, not in {form}: send form=json"
         raise Refused(Fault("unknown_option", "summary", reason, "form=json"))
+    with_steps = checked.options.get("detail") == "steps"
+    if with_steps and form != "json":
+        told_in_json = f"steps are told in JSON, not in {form}: send form=json"
+        raise Refused(Fault("unknown_option", "detail", told_in_json, "form=json"))
     rows = sent.table.rows_at_most if sent.table else checked.samples
     turn.large(rows > SMALL_SAMPLES or checked.options.get("uncertainty_method") == MONTE_CARLO)
     if sent.table is None:
         values = {each.term: each.values for each in checked.inputs if each.values is not None}
-        with_steps = checked.options.get("detail") == "steps"
         asked = asked_of(checked, {}, checked.samples)
         series = series_of(checked, checked.series.time.values) if checked.series else None
         told = answer(checked.question, values, checked.samples, with_steps=with_steps, asked=asked, series=series)
@@ -72,8 +75,8 @@ def _answered(
     elif form == "csv":
         response = _csv_behind(sent, checked, request, gate)
     else:
-        told, series = _whole_table(sent, checked)
-        response = _written(told, checked, form, _Columns(sent, checked).asked, _more(told, checked, series, sent))
+        told, series, asked = _whole_table(sent, checked)
+        response = _written(told, checked, form, asked, _more(told, checked, series, sent))
         request.environ[SAMPLES] = told.samples
     return response, checked
 
@@ -319,7 +322,14 @@ def _whole_table(sent: Sent, checked: Request) -> tuple[Answer, Series | None, A
     asked = asked_of(checked, doubts, samples)
     series = series_of(checked, values.pop(TIME)) if checked.series else None
     answered = answer(
-        checked.question, values, samples, gathered.unreadable(block), gathered.labels, asked=asked, series=series
+        checked.question,
+        values,
+        samples,
+        gathered.unreadable(block),
+        gathered.labels,
+        with_steps=checked.options.get("detail") == "steps",
+        asked=asked,
+        series=series,
     )
     return _strictly(answered, checked, block.line_numbers), series, asked
 

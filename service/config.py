@@ -84,7 +84,7 @@ def read(environment: Mapping[str, str] | None = None) -> Config:
         else:
             low, high = told["low"], told["high"]
             if not (text.isascii() and text.isdigit() and len(text) < 20 and low <= int(text) <= high):
-                reason = f"must be a whole number from {low} to {high}, not {ascii(text[:100])}"
+                reason = f"must be a whole number from {low} to {high}, not {text[:100]!a}"
                 raise ConfigurationError(f"{variable} {reason}")
             values[each.name] = int(text)
     return Config(**values)  # type: ignore[arg-type]  # each value has the type of its field

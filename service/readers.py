@@ -126,13 +126,14 @@ def _fields(body: bytes) -> dict[str, Any]:
 
 def _parts(body: bytes, request: Request, config: Config) -> dict[str, Any]:
     """Return the fields and files of a multipart body; none where it cannot be read."""
-    parser = FormDataParser(
-        max_form_memory_size=max(config.csv_bytes, config.json_bytes), max_form_parts=FIELDS_LIMIT
-    )
+    longest = max(config.csv_bytes, config.json_bytes)
+    parser = FormDataParser(max_form_memory_size=longest, max_form_parts=FIELDS_LIMIT)
     _, fields, uploads = parser.parse(BytesIO(body), request.mimetype, len(body), request.mimetype_params)
     found = _single(fields, "form")
     for name, files in uploads.lists():
         content = files[0].read()
+        for each in files:
+            each.close()
         key = name if name in ("csv", "json") else "json" if _is_json(content) else "csv"
         if len(files) > 1 or key in found:
             raise Refused(Fault("repeated_name", name[:100], "stands twice in the form"))

@@ -40,7 +40,9 @@ def _result(wanted: Wanted, values: Array, spread: Array | None, sure: Sureness 
 
 def _sure(sure: Sureness, spread: Array | None) -> dict[str, Any]:
     """Return what is told of a result's uncertainty; with several methods the parts within and between them."""
-    told: dict[str, Any] = {"u": _rows(sure.u), "u_inputs": _rows(sure.u_inputs)}
+    told: dict[str, Any] = {"u": _rows(sure.u)}
+    if sure.u_inputs is not sure.u:
+        told["u_inputs"] = _rows(sure.u_inputs)
     if spread is not None:
         told["u_total"] = _rows(np.sqrt(sure.u**2 + spread**2))
     if sure.budget:

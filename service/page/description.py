@@ -1,5 +1,6 @@
 """What the page needs of the API document: its inputs, units, needs and results, told once and without the rest."""
 
+from collections import Counter
 from collections.abc import Mapping
 from typing import Any
 
@@ -34,6 +35,8 @@ def _about(parameter: Described) -> Described:
     schema = parameter["schema"]
     told = {key.removeprefix("x-"): value for key, value in parameter.items() if key.startswith("x-")}
     told["description"] = parameter.get("description", "")
+    if "default-by-gas" in told:
+        told["default-by-gas"] = _mostly(told["default-by-gas"])
     if "example" in parameter:
         told["example"] = parameter["example"]
     if "default" in schema:
@@ -41,6 +44,12 @@ def _about(parameter: Described) -> Described:
     if choices := parameter.get("x-choices", schema.get("enum")):
         told["choices"] = choices
     return told
+
+
+def _mostly(by_gas: Mapping[str, str | None]) -> Described:
+    """Return the default of most gases under ``mostly``, and those of the others."""
+    most = Counter(by_gas.values()).most_common(1)[0][0]
+    return {"mostly": most, **{gas: method for gas, method in by_gas.items() if method != most}}
 
 
 def described(document: Mapping[str, Any]) -> dict[str, Any]:

@@ -45,11 +45,15 @@ def contents(document: Mapping[str, Any]) -> dict[str, Any]:
     }
 
 
-def paragraphs(text: str) -> list[list[dict[str, Any]]]:
-    """Return a text as paragraphs, each a list of pieces of which some are code between back-ticks."""
+def paragraphs(text: str) -> list[list[Described]]:
+    """Return a text as paragraphs, each in pieces."""
+    return [pieces(part) for part in text.split("\n\n")]
+
+
+def pieces(text: str) -> list[Described]:
+    """Return a text in pieces of which every second one stood between back-ticks and is code."""
     return [
-        [{"text": piece, "code": place % 2 == 1} for place, piece in enumerate(part.replace("\n", " ").split("`"))]
-        for part in text.split("\n\n")
+        {"text": piece, "code": place % 2 == 1} for place, piece in enumerate(text.replace("\n", " ").split("`"))
     ]
 
 

@@ -16,10 +16,11 @@ from service.catalogue import limits
 from service.config import Config, service_version
 from service.errors import TYPES
 from service.page.description import described
-from service.page.reference import contents
+from service.page.reference import contents, pieces, unit_anchor
 
 FOLDER = Path(__file__).parent
 DESCRIPTION = "description.json"
+FIRST = ("net.js", "state.js", "question.js", "form.js", "rows.js", "answer.js", "water.js", "dom.js", "numbers.js")
 POLICY = "; ".join(
     (
         "default-src 'none'",
@@ -70,7 +71,7 @@ class Site:
     @cached_property
     def page(self) -> bytes:
         """Return the page."""
-        return render_template("page.html", mark=self.mark, version=service_version()).encode()
+        return render_template("page.html", mark=self.mark, first=FIRST, version=service_version()).encode()
 
     @cached_property
     def reference(self) -> bytes:
@@ -102,6 +103,8 @@ def install_page(app: Flask, config: Config) -> None:
     """Add the page, the reference and their files to an application."""
     site = Site(config)
     blueprint = Blueprint("page", __name__, template_folder=str(FOLDER / "templates"))
+    blueprint.add_app_template_filter(pieces)
+    blueprint.add_app_template_filter(unit_anchor)
     html = "text/html; charset=utf-8"
 
     @blueprint.get("/")

@@ -4,6 +4,7 @@ from collections.abc import Callable, Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
 
 import numpy as np
+from numpy.typing import NDArray
 
 from service.physics.declare import TERMS, Array, Step
 from service.physics.engine import Shared, run
@@ -139,14 +140,16 @@ def _outcome(
         return np.where(lost if whole.ndim == 1 else lost[:, np.newaxis], np.nan, whole) if any_lost else whole
 
     results = {each.name: told(each.conversion.from_base(known[steps.keys[each.term]])) for each in question.wanted}
-    chain = tuple(_chain(steps, known, told)) if with_steps else ()
+    chain = tuple(_chain(steps, known, lost, told)) if with_steps else ()
     sure, spread = (None, None) if asked is None else sureness(question, steps, known, asked, verdict)
     doubt = None if asked is None else asked.doubt
     summary = summarise(question, steps, known, lost, series, spread, doubt) if series else None
     return Outcome(results, verdict, chain, sure or {}, spread.unpublished if spread else (), summary)
 
 
-def _chain(steps: Plan, known: Mapping[str, Array], told: Callable[[Array], Array]) -> Iterator[Told]:
+def _chain(
+    steps: Plan, known: Mapping[str, Array], lost: NDArray[np.bool_], told: Callable[[Array], Array]
+) -> Iterator[Told]:
     """Yield the numbers of a calculation in its order: the inputs, what the gas brings, then step by step."""
     for name in steps.leaves:
         yield Told(name, told(known[name]), "assumed" if name in steps.defaults else "as sent", None)
@@ -154,7 +157,14 @@ def _chain(steps: Plan, known: Mapping[str, Array], told: Callable[[Array], Arra
         yield Told(name, told(value), "constant of the gas or the method", None)
     for node in steps.nodes:
         for key in node.results:
-            yield Told(key, told(known[key]), node.step.formula, node.step)
+            if not _is_idle(known[key], lost):
+                yield Told(key, told(known[key]), node.step.formula, node.step)
+
+
+def _is_idle(array: Array, lost: NDArray[np.bool_]) -> bool:
+    """Tell whether a step gave no number where there are results: a branch that none of the samples took."""
+    kept = of_samples(array, lost.size)[~lost]
+    return kept.size > 0 and bool(np.isnan(kept).all())
 
 
 def _over(question: Question, outcomes: Mapping[str, Outcome]) -> tuple[Outcome, dict[str, Array]]:

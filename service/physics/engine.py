@@ -43,7 +43,7 @@ class _Planner:
         if term in DERIVED and term not in self.choose.given:
             return self.visit(DERIVED[term].of, {**swap, **DERIVED[term].replace})
         if step := self.choose.select(term):
-            return self._place(term, step, swap, suffix)
+            return self.visit(term, {}) if swap and step.in_situ else self._place(term, step, swap, suffix)
         constant = None if term in self.choose.given else self.choose.constant(term)
         if constant is None:
             return self._leaf(term)
@@ -61,8 +61,7 @@ class _Planner:
         for name in step.assumes:
             self._leaf(name)
         self.missing.update(dict.fromkeys(name for name in step.needs_given if name not in self.choose.given))
-        around = {} if step.in_situ else swap
-        arguments = tuple(self.visit(name, around) for name in terms_of(step))
+        arguments = tuple(self.visit(name, swap) for name in terms_of(step))
         self.records[step] = None
         self._note(step, term, swap)
         if step.same_as:

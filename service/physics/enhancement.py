@@ -190,7 +190,8 @@ def hoover_berkshire_1969_factor(
 
     Notes
     -----
-    A stagnant film of thickness D/k. Without wind k is 0, the film endless and the factor without limit: no number.
+    A stagnant film of thickness D/k: the factor falls to 1 as k grows and rises to tau/(tau - 1) as k falls to 0, where
+    the enhanced velocity is 0 as k is. NaN in, NaN out.
 
     References
     ----------

@@ -152,13 +152,9 @@ TRUE_WIND = quantity(
     Quantity(
         "true-wind",
         "True wind from the wind felt on a moving ship",
-        results=("true_wind_speed", "true_wind_direction"),
-        more=(
-            "true_wind_eastward",
-            "true_wind_northward",
-            "wind_speed_over_water",
-            "wind_direction_over_water",
-        ),
+        results=("true_wind_speed", "true_wind_direction", "wind_speed_over_water", "wind_direction_over_water"),
+        more=("true_wind_eastward", "true_wind_northward"),
+        needs_side={"wind_speed_over_water": "current", "wind_direction_over_water": "current"},
         of_gas=False,
     )
 )

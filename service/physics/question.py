@@ -8,7 +8,7 @@ from typing import Any
 import numpy as np
 
 from service.physics import quantities  # noqa: F401  imported for what it declares
-from service.physics.declare import FAMILIES, FAMILY_OF, SIDES, TERMS, Gas, Quantity, Remark, Side, Step
+from service.physics.declare import FAMILIES, FAMILY_OF, SIDES, STEPS, TERMS, Family, Gas, Quantity, Remark, Side, Step
 from service.physics.engine import plan
 from service.physics.faults import Fault, Refused
 from service.physics.methods import (
@@ -124,7 +124,7 @@ def ask(
     asked = methods | ({TRANSFER_FAMILY: ""} if parameterisations else {})
     _check_inputs(plans.values(), water, gas, given)
     _check_spread(plans.values(), given)
-    _check_unused(quantity, gas, given, optional, methods, parameterisations)
+    _check_unused(quantity, gas, given, optional, methods, parameterisations, dict(chosen))
     if TRANSFER_FAMILY not in asked and water not in (None, "ocean", "coastal") and _uses_transfer(first):
         allowed = ", ".join(methods_for_water(gas, water))
         raise Refused(Fault("missing_input", "parameterisation", f"has no default for water {water}", allowed))
@@ -135,7 +135,7 @@ def ask(
         wanted,
         plans,
         frozenset(leaf for each in plans.values() for leaf in each.leaves if leaf in given),
-        _assumed(plans.values(), gas, asked),
+        _assumed(plans.values(), gas, asked, given),
         _methods(plans.values()),
     )
 
@@ -223,8 +223,10 @@ def _check_inputs(plans: Iterable[Plan], water: str | None, gas: Gas, given: fro
             elif side:
                 faults[side.name] = _side_missing(side, gas, given)
             elif TERMS[term].is_input:
-                unit = TERMS[term].unit
-                faults[term] = Fault("missing_input", term, f"is needed: {TERMS[term].meaning} [{unit}]")
+                beside = next((f" beside {r.way}" for r in each.records if term in r.needs_given), "")
+                meaning = TERMS[term].meaning.partition("; left out")[0]  # what may be left out is not told as missing
+                told = f"is needed{beside}: {meaning} [{TERMS[term].unit}]"
+                faults[term] = Fault("missing_input", term, told)
             else:
                 faults[term] = Fault("missing_input", term, f"cannot be had for this gas: {TERMS[term].meaning}")
         if water in INLAND:
@@ -263,14 +265,34 @@ def _check_unused(
     optional: frozenset[str],
     methods: Mapping[str, str],
     parameterisations: Iterable[str],
+    chosen: Mapping[str, str],
 ) -> None:
+    """Refuse inputs and options that change nothing: whoever sends one believes that it does."""
     known: set[str] = set()
+    families: set[str | None] = set()
     for name in [*parameterisations] or [""]:
         by_name = {**methods, **({TRANSFER_FAMILY: name} if name else {})}
         for result in (*quantity.results, *quantity.more):
-            known |= set(plan((result,), given, tuple(sorted(by_name.items())), gas.name).leaves)
-    if unused := sorted(given - known - optional):
-        raise Refused(*(_unused(name, given) for name in unused))
+            steps = plan((result,), given, tuple(sorted(by_name.items())), gas.name)
+            known |= set(steps.leaves)
+            families |= set() if steps.missing else {_family_name(record) for record in steps.records}
+    idle = {name for name, method in chosen.items() if method != default_method(gas, FAMILIES[name])} - families
+    faults = [_unused(name, given) for name in sorted(given - known - optional)]
+    if faults or idle:
+        raise Refused(*faults, *(_idle(FAMILIES[name], chosen[name], given) for name in sorted(idle)))
+
+
+def _idle(family: Family, method: str, given: frozenset[str]) -> Fault:
+    """Return the fault of an option that nothing here depends on, and what it would depend on."""
+    for result in family.results:
+        if result in given:
+            told = f"both say what is known of the {TERMS[result].meaning.partition(';')[0]}: send one"
+            return Fault("two_ways", f"{family.option} and {result}", told)
+    ways = ways_of(family.results[0], method)
+    if ways and given.isdisjoint(ways):
+        allowed = " or ".join(ways)
+        return Fault("unused", family.option, f"is used only beside {allowed}: send that too, or leave it out", allowed)
+    return Fault("unused", family.option, "changes nothing with the inputs sent here: leave it out")
 
 
 def _unused(name: str, given: frozenset[str]) -> Fault:
@@ -298,11 +320,22 @@ def _with_remarks(steps: Plan, name: str | None, water: str | None, asked: Mappi
     return replace(steps, remarks=tuple(remarks))
 
 
-def _assumed(plans: Iterable[Plan], gas: Gas, asked: Mapping[str, str]) -> dict[str, dict[str, Any]]:
+def _stand_ins(steps: Plan, given: frozenset[str]) -> dict[str, str]:
+    """Return what an instrument was not said to read, with the term that is taken for it."""
+    read = given.intersection(steps.leaves)
+    absent = [name for name, term in TERMS.items() if name not in given and not read.isdisjoint(term.used_with)]
+    found = {name: next((s.same_as for s in STEPS.get(name, {}).get(None, ())), None) for name in absent}
+    return {name: other for name, other in found.items() if other}
+
+
+def _assumed(
+    plans: Iterable[Plan], gas: Gas, asked: Mapping[str, str], given: frozenset[str]
+) -> dict[str, dict[str, Any]]:
     told: dict[str, dict[str, Any]] = {}
     for each in plans:
         for name, value in each.defaults.items():
             told[name] = {"value": value, "unit": TERMS[name].unit}
+        told |= {name: {"value": other} for name, other in _stand_ins(each, given).items()}
         for record in each.records:
             for name, value in record.assumes_values.items():
                 told[name] = {"value": value, "unit": TERMS[name].unit}

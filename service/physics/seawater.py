@@ -125,6 +125,7 @@ def water_vapour_pressure(water_temperature: Array, salinity: Array) -> Array:
     "surface_pressure",
     way="barometer_height",
     formula="P0 = P exp(g h / (R_d T_v)), air saturated at water_temperature",
+    in_situ=True,
 )
 def surface_pressure(
     air_pressure: Array, barometer_height: Array, water_temperature: Array, water_vapour_pressure: Array

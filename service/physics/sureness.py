@@ -32,7 +32,7 @@ class Sureness:
     Attributes
     ----------
     u, u_inputs : (samples,) array
-        Standard uncertainty, with the methods' and from the inputs alone.
+        Standard uncertainty, with the methods' and from the inputs alone; the same array where no method counts.
     budget : mapping of str to (samples,) array
         Shares in u squared; together 1.
     low, high : (samples,) array or None
@@ -111,9 +111,10 @@ def sureness(
     for each in question.wanted:
         key, change = steps.keys[each.term], each.conversion
         low, high = found.interval.get(key, (None, None))
+        u = shown(change.unscale(found.u[key]))
         told[each.name] = Sureness(
-            shown(change.unscale(found.u[key])),
-            shown(change.unscale(found.u_inputs[key])),
+            u,
+            u if doubt.methods == "0" else shown(change.unscale(found.u_inputs[key])),
             {name: shown(share) for name, share in found.budget.get(key, {}).items()},
             None if low is None else shown(change.from_base(low)),
             None if high is None else shown(change.from_base(high)),

@@ -186,7 +186,9 @@ def _supplied(doubt: Doubt) -> Uncertainty | None:
     return Uncertainty(doubt.unpublished / 100.0, True, "supplied by the caller", stated)
 
 
-def _part(plan: Plan, known: Mapping[str, Array], keys: Sequence[str], name: str, uncertainty: Array) -> dict[str, Array]:
+def _part(
+    plan: Plan, known: Mapping[str, Array], keys: Sequence[str], name: str, uncertainty: Array
+) -> dict[str, Array]:
     """Return derivative times uncertainty of one input, one-sided at the limits of the possible."""
     term, value = TERMS[name], known[name]
     low, high = term.possible

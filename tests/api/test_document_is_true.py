@@ -171,7 +171,12 @@ def test_a_value_that_does_not_fit_the_schema_is_refused(value: Any) -> None:
 
 
 @pytest.mark.parametrize(
-    "path", [path for path, item in DOCUMENT["paths"].items() if "post" not in item and path != "/openapi.json"]
+    "path",
+    [
+        path
+        for path, item in DOCUMENT["paths"].items()
+        if "post" not in item and "application/json" in item["get"]["responses"]["200"]["content"]
+    ],
 )
 def test_what_the_catalogue_answers_fits_its_schema(path: str) -> None:
     operation = DOCUMENT["paths"][path]["get"]

@@ -33,7 +33,8 @@ PROBLEMS: list[tuple[str, str, bytes, dict[str, str], int, str]] = [
     ("TRACE", "/v1/flux", b"", {}, 405, "method"),
     ("POST", "/v1/gases", b"", {}, 405, "method"),
     ("GET", "/v1/flux?gas=co2&salinity=" + "1;" * 5000, b"", {}, 414, "too_large"),
-    ("POST", "/v1/flux", b"\x1f\x8b", {"Content-Encoding": "gzip"}, 415, "media_type"),
+    ("POST", "/v1/flux", b"\x1b", {"Content-Encoding": "br"}, 415, "media_type"),
+    ("POST", "/v1/flux", b"\x1f\x8b", {"Content-Encoding": "gzip"}, 400, "cut_short"),
     ("GET", "/v1/flux", b"", {}, 422, "missing_input"),
     ("POST", "/v1/flux", b"[]", {}, 422, "unreadable"),
 ]
@@ -140,10 +141,10 @@ def test_a_method_that_is_not_taken_is_answered_with_those_that_are(
 
 
 def test_an_encoding_that_is_not_read_is_answered_with_the_one_that_is(client: FlaskClient) -> None:
-    answer = client.post("/v1/flux", data=b"\x1f\x8b", headers={"Content-Encoding": "br"})
+    answer = client.post("/v1/flux", data=b"\x1b", headers={"Content-Encoding": "br"})
 
     assert answer.status_code == 415
-    assert answer.headers["Accept-Encoding"] == "identity"
+    assert answer.headers["Accept-Encoding"] == "gzip, identity"
     assert client.post("/v1/flux", data=body(), headers={"Content-Encoding": "identity"}).status_code == 200
 
 

@@ -13,7 +13,7 @@ PHYSICS, SCHEMAS, WEB = "service.physics", "schemas", "service"
 ALLOWED = {
     PHYSICS: {"numpy", "gsw"},
     SCHEMAS: {"numpy", "marshmallow", "apispec"},
-    WEB: {"numpy", "flask", "werkzeug", "orjson", "gunicorn", "marshmallow"},
+    WEB: {"numpy", "flask", "werkzeug", "orjson", "gunicorn", "marshmallow", "prometheus_client"},
 }
 BELOW = {PHYSICS: {PHYSICS}, SCHEMAS: {PHYSICS, SCHEMAS}, WEB: {PHYSICS, SCHEMAS, WEB}}
 
