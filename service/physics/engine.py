@@ -41,7 +41,8 @@ class _Planner:
 
     def _find(self, term: str, swap: Swap, suffix: str) -> str:
         if term in DERIVED and term not in self.choose.given:
-            return self.visit(DERIVED[term].of, {**swap, **DERIVED[term].replace})
+            inner = {old: swap.get(new, new) for old, new in DERIVED[term].replace.items()}
+            return self.visit(DERIVED[term].of, {**swap, **inner})
         if step := self.choose.select(term):
             return self.visit(term, {}) if swap and step.in_situ else self._place(term, step, swap, suffix)
         constant = None if term in self.choose.given else self.choose.constant(term)

@@ -104,13 +104,14 @@ def ask(
     """
     given = _with_partners(given, optional)
     _check_sides(given, gas)
-    names = pick or _main_results(quantity, gas, given, dict(chosen))
     methods = dict(chosen)
-    wanted = tuple(_wanted(quantity, gas, name, dict(units), mass_as, methods) for name in names)
     if own := method_by_input(given):
         if parameterisations and own[0] == GIVEN:
             raise Refused(Fault("two_ways", own[1], "takes the place of a parameterisation: send one or the other"))
         methods |= {} if parameterisations else {TRANSFER_FAMILY: own[0]}
+    leading = {TRANSFER_FAMILY: parameterisations[0]} if parameterisations else {}
+    names = pick or _main_results(quantity, gas, given, methods | leading)
+    wanted = tuple(_wanted(quantity, gas, name, dict(units), mass_as, methods) for name in names)
     plans: dict[str | None, Plan] = {}
     for name in parameterisations or (None,):
         by_name = methods | ({TRANSFER_FAMILY: name} if name else {})

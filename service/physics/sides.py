@@ -213,7 +213,12 @@ def concentration_in_water_per_litre(solubility_per_litre: Array, fugacity_in_wa
     return solubility_per_litre * fugacity_in_water
 
 
-derived("fugacity_in_air_of_saturation", of="fugacity_in_air", surface_pressure="saturation_pressure")
+derived(
+    "fugacity_in_air_of_saturation",
+    of="fugacity_in_air",
+    surface_pressure="saturation_pressure",
+    skin_temperature="water_temperature",  # a probe's percentage knows of no skin
+)
 derived("fugacity_in_air_of_bulk", of="fugacity_in_air", skin_temperature="subskin_temperature")
 same_as("saturation_pressure", "surface_pressure")
 

@@ -126,7 +126,7 @@ def summarise(
         means[each.name] = float(weights @ of_used(known[key])) if time.size else np.nan
         if spread is not None and doubt is not None:
             parts = {name: weights * of_used(part[key]) for name, part in spread.parts.items()}
-            doubts[each.name] = combined(parts, doubt, series.common, spread.unpublished)
+            doubts[each.name] = combined(parts, doubt, series.common, spread.unknown.get(key, ()))
     nothing = np.nan
     return Summary(
         int(time.size),

@@ -13,6 +13,7 @@ from service.physics.plans import Node, Plan
 STEP = 1e-4  # of a term's scale: the difference over which a derivative is taken
 METHOD_FAMILIES = ("transfer_velocity", "solubility", "schmidt_number")  # whose published uncertainty counts
 DRAWS_TIMES_SAMPLES = 20_000_000  # bounds the time of one request
+MATTERS = 1e-9  # relative change of a result per relative change of a method, below which it is rounding
 APART = 0.1  # relative difference of the two ways at which a sample is told of it
 Pair = tuple[str, str]
 
@@ -46,8 +47,8 @@ class Spread:
         Standard uncertainty, with the methods and from the inputs alone, in the unit of the term.
     budget : mapping of str to mapping of str to array
         The share of each input, method and correlation in u squared.
-    unpublished : tuple of str
-        Methods that publish no uncertainty, for which u is not given.
+    unknown : mapping of str to tuple of str
+        Numbers of which u is not given, with the methods that publish no uncertainty.
     interval : mapping of str to (low, high)
         Coverage interval, where one was asked for.
     parts : mapping of str to mapping of str to array
@@ -57,9 +58,14 @@ class Spread:
     u: Mapping[str, Array]
     u_inputs: Mapping[str, Array]
     budget: Mapping[str, Mapping[str, Array]]
-    unpublished: tuple[str, ...]
+    unknown: Mapping[str, tuple[str, ...]]
     interval: Mapping[str, tuple[Array, Array]] = field(default_factory=dict)
     parts: Mapping[str, Mapping[str, Array]] = field(default_factory=dict)
+
+    @property
+    def unpublished(self) -> tuple[str, ...]:
+        """Return the methods for want of whose uncertainty some number has none."""
+        return tuple(dict.fromkeys(name for names in self.unknown.values() for name in names))
 
 
 def groups(plan: Plan, gas: Gas) -> list[Group]:
@@ -149,11 +155,12 @@ def first_order(
     for pair in pairs.values():
         variance = {key: variance[key] + pair[key] for key in keys}
     u_inputs = {key: np.sqrt(np.maximum(variance[key], 0.0)) for key in keys}
-    unpublished: list[str] = []
+    unknown: dict[str, list[str]] = {key: [] for key in keys}
     for group in _counted(plan, gas, doubt):
         published = group.uncertainty or _supplied(doubt)
         if published is None:
-            unpublished.append(group.name)
+            for key in _keys_that_rest_on(plan, known, keys, group):
+                unknown[key].append(group.name)
             continue
         parts[group.name] = _method_part(plan, known, keys, group, published)
         variance = {key: variance[key] + parts[group.name][key] ** 2 for key in keys}
@@ -161,13 +168,21 @@ def first_order(
     squares = {name: {key: part[key] ** 2 for key in keys} for name, part in parts.items()} | pairs
     with np.errstate(all="ignore"):
         budget = {key: {name: each[key] / variance[key] for name, each in squares.items()} for key in keys}
-    if unpublished:
-        budget, u = {}, {key: np.full_like(value, np.nan) for key, value in u.items()}
+    u |= {key: np.full_like(u[key], np.nan) for key in keys if unknown[key]}
+    budget = {key: shares for key, shares in budget.items() if not unknown[key]}
     interval = {}
     if coverage is not None:
         k = NormalDist().inv_cdf(0.5 + coverage / 2.0)
         interval = {key: (known[key] - k * u[key], known[key] + k * u[key]) for key in keys}
-    return Spread(u, u_inputs, budget, tuple(unpublished), interval, parts)
+    return Spread(u, u_inputs, budget, {key: tuple(names) for key, names in unknown.items() if names}, interval, parts)
+
+
+def _keys_that_rest_on(plan: Plan, known: Mapping[str, Array], keys: Sequence[str], group: Group) -> Iterator[str]:
+    """Yield the wanted numbers that change with a method; one that it enters and leaves again does not count."""
+    moved = _method_part(plan, known, keys, group, Uncertainty(1.0, True, "", ""))
+    for key in keys:
+        if (np.abs(moved[key]) > MATTERS * np.abs(known[key])).any():
+            yield key
 
 
 def _counted(plan: Plan, gas: Gas, doubt: Doubt) -> Iterator[Group]:
@@ -270,7 +285,7 @@ def monte_carlo(
             told[key][..., row] = np.apply_along_axis(_of_draws, -1, drawn[key], coverage).T
     u = {key: each[0] for key, each in told.items()}
     interval = {key: (each[1], each[2]) for key, each in told.items()} if coverage is not None else {}
-    return Spread(u, linear.u_inputs, linear.budget, (), interval, linear.parts)
+    return Spread(u, linear.u_inputs, linear.budget, {}, interval, linear.parts)
 
 
 def _of_draws(values: Array, coverage: float | None) -> Array:

@@ -88,7 +88,9 @@ def free_port() -> int:
 @contextmanager
 def server(*command: str, port: int) -> Iterator[Connection]:
     """Run a server with one worker and yield a connection to it."""
-    process = subprocess.Popen([sys.executable, *command], stderr=subprocess.DEVNULL, cwd=HERE.parents[1])
+    process = subprocess.Popen(
+        [sys.executable, *command], stdout=subprocess.DEVNULL, stderr=subprocess.DEVNULL, cwd=HERE.parents[1]
+    )
     try:
         deadline = time.monotonic() + 20.0
         while True:

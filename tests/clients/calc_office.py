@@ -8,6 +8,8 @@ macro for Excel return.
 """
 
 import json
+import os
+import signal
 import subprocess
 import sys
 import tempfile
@@ -139,6 +141,7 @@ def main(workbook: Path, locale: str, twin: Path, formulas: list[str]) -> None:
             ],
             stdout=subprocess.DEVNULL,
             stderr=subprocess.DEVNULL,
+            start_new_session=True,
         )
         try:
             desktop = connected(process, pipe)
@@ -147,9 +150,9 @@ def main(workbook: Path, locale: str, twin: Path, formulas: list[str]) -> None:
                 desktop.terminate()
             process.wait(PATIENCE)
         finally:
-            if process.poll() is None:
-                process.kill()
-                process.wait()
+            with suppress(ProcessLookupError):
+                os.killpg(process.pid, signal.SIGKILL)  # what was started is a script that starts the office
+            process.wait()
 
 
 if __name__ == "__main__":

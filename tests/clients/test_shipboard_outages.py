@@ -4,6 +4,7 @@ import random
 import subprocess
 import sys
 from collections.abc import Iterator
+from contextlib import suppress
 from functools import partial
 from pathlib import Path
 
@@ -39,25 +40,40 @@ def own_service(tmp_path: Path) -> Iterator[Service]:
 def test_killed_at_random_moments_it_writes_every_interval_once(
     service: str, finely: Path, tmp_path: Path, seed: int
 ) -> None:
+    """A moment is told by how much has been written, so that it does not depend on the speed of the machine."""
     moments = random.Random(seed)
-    description = ship(tmp_path, 5)
+    data, description = tmp_path / "data", ship(tmp_path, 5)
     kills = 0
     while True:
+        enough = written(data) + moments.randrange(1, 12_000)  # bytes, of some 90,000
         process = subprocess.Popen(
-            command(service, tmp_path, SAMPLE, "--ship", description), stderr=subprocess.DEVNULL, env=ENVIRONMENT
+            command(service, data, SAMPLE, "--ship", description), stderr=subprocess.DEVNULL, env=ENVIRONMENT
         )
         with stopped_at_the_end(process):
-            try:
-                status = process.wait(moments.uniform(0.15, 0.25 + 0.03 * kills))
-            except subprocess.TimeoutExpired:
-                kills += 1
-                continue
-        break
+            until(partial(ended_or_wrote, process, data, enough), pause=0.0005)
+            process.kill()
+            status = process.wait(PATIENCE)
+        if status != KILLED:
+            break
+        kills += 1
 
     assert status == 0
-    assert kills >= 3
-    assert tables(tmp_path) == tables(finely)
-    assert waiting(tmp_path) == 0
+    assert kills >= 5
+    assert tables(data) == tables(finely)
+    assert waiting(data) == 0
+
+
+def written(data: Path) -> int:
+    """Return how many bytes are in the queue and the tables."""
+    total = 0
+    for path in (data / "queue.jsonl", *data.glob("flux_*.csv")):
+        with suppress(FileNotFoundError):
+            total += path.stat().st_size
+    return total
+
+
+def ended_or_wrote(process: "subprocess.Popen[bytes]", data: Path, enough: int) -> bool:
+    return process.poll() is not None or written(data) >= enough
 
 
 KILL_AT = """

@@ -313,3 +313,19 @@ def test_a_method_that_publishes_nothing_leaves_only_the_inputs() -> None:
     assert np.isnan(found.u)
     assert found.u_inputs > 0.0
     assert "schmidt_number: someone-1999" in str(found.reason)
+
+
+def test_a_method_that_publishes_nothing_costs_only_the_results_that_rest_on_it() -> None:
+    values = {"water_temperature": 15.0, "salinity": 35.0, "wind_speed": 7.0}
+    inputs = {name: np.array([value]) for name, value in values.items()}
+    pick = ("schmidt_number", "transfer_velocity", "wind_speed_10m")
+    question = ask(QUANTITIES["transfer-velocity"], GASES["o2"], None, frozenset(inputs), (), (), pick, (), "gas")
+
+    outcome = answer(question, inputs, 1, asked=Asked(Doubt({"wind_speed": np.array([0.5])}))).outcome
+
+    assert {name: bool(np.isnan(sure.u[0])) for name, sure in outcome.sure.items()} == {
+        "schmidt_number": True,
+        "transfer_velocity": True,
+        "wind_speed_10m": False,
+    }
+    assert outcome.unpublished == ("schmidt_number: wanninkhof-2014",)

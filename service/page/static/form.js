@@ -83,13 +83,14 @@ class Form {
 
   quantityRow() {
     const row = this.rows.get("quantity") || this.made("quantity", () => {
-      const choices = Object.entries(this.description.quantities).map(([name, each]) => [name, capital(each.title)]);
+      const choices = Object.keys(this.description.quantities).map((name) => [name, words(name.replaceAll("-", " "))]);
       const field = chooser({ id: "in-quantity" }, choices, state.quantity);
       field.addEventListener("change", () => changeQuantity(this.description, field.value));
       return el("div", { class: "row option" }, el("label", { for: "in-quantity" }, "What to compute"),
-        el("span", { class: "given" }, field));
+        el("span", { class: "given" }, field), el("p", { class: "help" }));
     });
     row.querySelector("select").value = state.quantity;
+    row.querySelector(".help").textContent = this.question.quantity.title;
     return row;
   }
 
@@ -124,7 +125,7 @@ class Form {
     const only = about["gases-by-choice"] || {};
     const fitting = about.choices.filter((each) => !only[each] || only[each].includes(this.question.gas));
     const assumed = this.question.assumedMethod(about);
-    if (name !== "parameterisation") return [fitting.map((each) => [each, each || "(nothing)"]), assumed === "" ? "as usual" : `as usual: ${assumed}`];
+    if (name !== "parameterisation") return [fitting.map((each) => [each, each || "(nothing)"]), assumed === "" ? "not told" : `as usual: ${assumed}`];
     return this.parameterisations(fitting, assumed);
   }
 

@@ -3,15 +3,25 @@
 const RAISED = { "-": "⁻", 0: "⁰", 1: "¹", 2: "²", 3: "³", 4: "⁴", 5: "⁵", 6: "⁶", 7: "⁷", 8: "⁸", 9: "⁹" };
 const MICRO = /\bu(?=(?:mol|atm|bar|g|M|L)\b)/g;
 const DIGITS = 5;
+const SMALL = 1e-3; // below which a number is written with a power of ten
 
 const raised = (text) => [...text].map((sign) => RAISED[sign] || sign).join("");
 
 export function number(value, digits = DIGITS) {
   if (value === null || value === undefined || !Number.isFinite(value)) return "none";
-  const shown = digits ? Number(value.toPrecision(digits)) : value;
-  const [mantissa, exponent] = String(shown).split("e");
+  const [mantissa, exponent] = shortened(value, digits).split("e");
   const text = mantissa.replace("-", "−");
   return exponent ? `${text} × 10${raised(String(Number(exponent)))}` : text;
+}
+
+// Digits that are cut are cut at the same place in every row, zeros too; a number that is short stays as it is.
+function shortened(value, digits) {
+  const rounded = digits ? Number(value.toPrecision(digits)) : value;
+  if (value !== 0 && Math.abs(value) < SMALL) return rounded.toExponential();
+  const text = String(rounded);
+  if (rounded === value || text.includes("e")) return text;
+  const fixed = value.toPrecision(digits);
+  return fixed.includes("e") ? text : fixed;
 }
 
 export function unit(text) {

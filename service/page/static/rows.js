@@ -84,7 +84,7 @@ function severalRow(name, about, choices, lead) {
     const chosen = (state.values.get(name) ?? "").split(";").map((each) => each.trim()).filter(Boolean);
     const now = [...fields.children].map((each) => each.value);
     const wanted = chosen.length ? [...chosen, ""] : [""];
-    if (now.join(";") === wanted.join(";")) return;
+    if (now.length === wanted.length && now.every((value, at) => value === wanted[at])) return;
     const hadFocus = fields.contains(document.activeElement)
       ? [...fields.children].indexOf(document.activeElement) : -1;
     fields.replaceChildren(...wanted.map((value, place) => {

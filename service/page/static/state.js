@@ -1,6 +1,6 @@
 // The question and what is shown of it, kept in the address so that a link tells the same.
 
-const OF_PAGE = ["quantity", "x_column", "window"]; // names that are the page's own; all others are the service's
+const OF_PAGE = ["quantity", "check_gas", "check_text", "window", "time"]; // names that are the page's own
 
 export const state = { quantity: "", values: new Map(), page: new Map(), isExample: false };
 const listeners = [];

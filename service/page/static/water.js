@@ -19,7 +19,7 @@ export function drawWater(wind = 5) {
 }
 
 function surface(level, near, strength) {
-  const high = strength ** 0.8 * 9 * near; // of the ripples
+  const high = strength ** 0.8 * 15 * near; // of the ripples
   const long = 9 + 15 * near; // from crest to crest
   const points = [];
   for (let across = 0; across <= WIDE; across += STEP) {
