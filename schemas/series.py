@@ -10,7 +10,7 @@ from schemas.checked import Input, Request, SeriesAsked
 from schemas.moments import Moment
 from schemas.options import Choice, Words
 from schemas.samples import Measured
-from service.physics.declare import TERMS, Array, Quantity
+from service.physics.declare import SIDES, TERMS, Array, Quantity
 from service.physics.faults import Fault, Refused
 from service.physics.series import out_of_order
 from service.physics.summary import Series
@@ -38,6 +38,18 @@ def series_fields(quantity: Quantity) -> dict[str, fields.Field[Any]]:
 def reads_time(inputs: Collection[str], sent: Mapping[str, Any]) -> bool:
     """Tell whether a time that is sent is read: by a quantity that needs it, or for a summary."""
     return TIME in inputs or str(sent.get(SUMMARY, "0")).strip() == "1"
+
+
+def wants_time(quantity: Quantity, sent: Mapping[str, Any]) -> bool:
+    """Tell whether a column that happens to be called time is read: where a result asked for hangs on it.
+
+    Tables often hold a time without being a series, so that no sample may be judged by it unasked; a column that is
+    pointed to, ``time=@header``, is read anyway.
+    """
+    picked = {word.strip() for word in str(sent.get("pick", "")).split(";")}
+    sides = {name for name, side in SIDES.items() if TIME in side.members}
+    hanging = {result for result, side in quantity.needs_side.items() if side in sides}
+    return quantity.series or str(sent.get(SUMMARY, "0")).strip() == "1" or bool(picked & hanging)
 
 
 def check_course(inputs: Iterable[Input], samples: int) -> None:

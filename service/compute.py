@@ -12,7 +12,7 @@ from numpy.typing import NDArray
 from schemas.checked import Input, Request
 from schemas.doubts import asked_of
 from schemas.requests import SAMPLES_LIMIT, load
-from schemas.series import PER_SAMPLE, TIME, reads_time, series_of
+from schemas.series import TIME, series_of, wants_time
 from schemas.vocabulary import UNCERTAIN, quantity_inputs
 from service import writers
 from service.columns import bind
@@ -83,11 +83,10 @@ def _answered(
 
 def _column_names(quantity: Quantity, sent: Mapping[str, Any]) -> list[str]:
     """Return the inputs that a column may hold; what stands once for the request is never read from one."""
-    inputs = quantity_inputs(quantity)
-    names = [name for name in inputs if TERMS[name].holds in PER_SAMPLE]
-    if reads_time(inputs, sent) and TIME not in names:
+    names = [name for name in quantity_inputs(quantity) if TERMS[name].holds == "sample"]
+    if wants_time(quantity, sent):
         names.append(TIME)
-    return [*names, *(UNCERTAIN + name for name in names if TERMS[name].holds == "sample")]
+    return [*names, *(UNCERTAIN + name for name in names if name != TIME)]
 
 
 def _without_columns(raw: dict[str, Any]) -> dict[str, Any]:

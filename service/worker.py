@@ -33,6 +33,7 @@ from service.errors import PROBLEM, cut, document
 from service.physics.faults import Fault
 
 WAIT_FOR_FIRST_BYTE = 0.1  # s; then a silent connection waits without a thread
+LINGER, LINGER_SLOW = 2.0, 0.2  # s; how long a client may take to close its side, so that it reads the last answer
 LEAST_RATE = 500  # bytes per second, below which a client that keeps sending is cut off
 OWN_FAULTS = (ConfigurationProblem, InvalidResponseHeader, InvalidResponseHeaderName)
 REASONS = {408: "Request Timeout", 414: "URI Too Long", 417: "Expectation Failed", 431: "Headers Too Large"}
@@ -59,6 +60,7 @@ class Paced(SocketUnreader):  # type: ignore[misc]
         self._poll = select.poll()
         self._poll.register(sock, select.POLLIN)
         self._seconds = seconds
+        self.gave_up = False
         self.start()
 
     def start(self) -> None:
@@ -75,6 +77,7 @@ class Paced(SocketUnreader):  # type: ignore[misc]
         """
         left = self._deadline - time.monotonic()
         if left <= 0 or not self._poll.poll(left * 1000):
+            self.gave_up = True
             raise TooSlow(f"nothing, or less than {LEAST_RATE} bytes/s, came for {self._seconds:g} s")
         found: bytes = super().chunk(size_hint)
         self._deadline += len(found) / LEAST_RATE
@@ -115,7 +118,7 @@ class Worker(gthread.ThreadWorker):  # type: ignore[misc]
         result = super().handle(conn)
         if result is False:
             conn.has_ended = True
-            conn.close(graceful=True)
+            util.close_graceful(conn.sock, LINGER_SLOW if conn.parser.unreader.gave_up else LINGER)
         return result
 
     def _prepare(self, conn: Any) -> None:

@@ -11,6 +11,10 @@ from service.physics.declare import GASES, QUANTITIES
 
 UNCERTAIN = "x-uncertainty-of"
 UNIT_OF_RESULT = "unit."
+READ = frozenset(  # what the page reads of a parameter, without x-
+    {"unit", "units", "possible", "holds", "used-with", "several", "choices", "default-by-gas", "gases-by-choice"}
+    | {"no-default-for-water"}
+)
 EXAMPLE = "get"  # the question with which the page begins
 
 
@@ -33,7 +37,8 @@ def parameters(document: Mapping[str, Any], path: str) -> dict[str, Described]:
 def _about(parameter: Described) -> Described:
     """Return a parameter without what the page does not read."""
     schema = parameter["schema"]
-    told = {key.removeprefix("x-"): value for key, value in parameter.items() if key.startswith("x-")}
+    named = {key.removeprefix("x-"): value for key, value in parameter.items() if key.startswith("x-")}
+    told = {key: value for key, value in named.items() if key in READ}
     told["description"] = parameter.get("description", "")
     if "default-by-gas" in told:
         told["default-by-gas"] = _mostly(told["default-by-gas"])
@@ -64,10 +69,15 @@ def described(document: Mapping[str, Any]) -> dict[str, Any]:
     -------
     dict
         ``names`` holds each input and option that is the same wherever it is taken; ``quantities`` which of them a
-        quantity takes, and what it says otherwise.
+        quantity takes, and what it says otherwise; ``results`` each result that is the same wherever it is told,
+        and ``needed_by`` the methods that need an input.
     """
     names: dict[str, Described] = {}
-    quantities = {name: _quantity(document, name, names) for name in QUANTITIES}
+    results: dict[str, Described] = {}
+    needed_by: dict[str, Described] = {}
+    quantities = {name: _quantity(document, name, names, results) for name in QUANTITIES}
+    for quantity in quantities.values():
+        quantity["needs"] = {name: _shared(name, need, needed_by) for name, need in quantity["needs"].items()}
     return {
         "version": document["info"]["version"],
         "flags": {str(flag): meaning for flag, meaning in FLAGS.items()},
@@ -76,12 +86,25 @@ def described(document: Mapping[str, Any]) -> dict[str, Any]:
         "gases": {gas.name: {"title": gas.title, "formula": gas_record(gas)["formula"]} for gas in GASES.values()},
         "waters": {each["name"]: each["water"] for each in parameterisations(None, None, None, None)},
         "names": names,
+        "results": results,
+        "needed_by": needed_by,
         "quantities": quantities,
     }
 
 
-def _quantity(document: Mapping[str, Any], name: str, names: dict[str, Described]) -> Described:
-    item, own, taken, doubted = document["paths"][f"/v1/{name}"], {}, [], []
+def _shared(name: str, need: Described, needed_by: dict[str, Described]) -> Described:
+    """Return a need without the methods that bring it along, where these are the same for another quantity."""
+    methods = need.get("methods")
+    if methods is None or needed_by.setdefault(name, methods) != methods:
+        return need
+    return {key: value for key, value in need.items() if key != "methods"}
+
+
+def _quantity(
+    document: Mapping[str, Any], name: str, names: dict[str, Described], results: dict[str, Described]
+) -> Described:
+    item, own = document["paths"][f"/v1/{name}"], dict[str, Described]()
+    taken, measured, doubted = list[str](), list[str](), list[str]()
     units: dict[str, str] = {}
     for parameter, about in parameters(document, f"/v1/{name}").items():
         if UNCERTAIN in about:
@@ -90,19 +113,24 @@ def _quantity(document: Mapping[str, Any], name: str, names: dict[str, Described
             units[parameter.removeprefix(UNIT_OF_RESULT)] = about["x-units"]
         else:
             taken.append(parameter)
+            if "x-unit" in about:
+                measured.append(parameter)
             if names.setdefault(parameter, _about(about)) != _about(about):
                 own[parameter] = _about(about)
+    for each in item["x-results"]:
+        results.setdefault(each["name"], {"meaning": each["meaning"], "units": units[each["name"]]})
     return {
         "title": QUANTITIES[name].title,
         "address": f"/v1/{name}",
         "takes": taken,
         "own": own,
-        "uncertain": doubted,
-        "inputs": item["x-inputs"],
+        "certain": sorted(set(measured) - set(doubted)),
+        "needs": {
+            each["name"]: {key: value for key, value in each.items() if key != "name"}
+            for each in item["x-inputs"]
+            if each["needed"] != "never"
+        },
         "sides": item["x-sides"],
-        "results": [
-            {**{key: each[key] for key in ("name", "unit", "meaning", "main")}, "units": units[each["name"]]}
-            for each in item["x-results"]
-        ],
+        "results": [{key: each[key] for key in ("name", "unit", "main")} for each in item["x-results"]],
         "example": next((each["url"] for each in item["x-examples"] if each["name"] == EXAMPLE), ""),
     }

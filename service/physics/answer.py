@@ -150,7 +150,7 @@ def _outcome(
 def _chain(
     steps: Plan, known: Mapping[str, Array], lost: NDArray[np.bool_], told: Callable[[Array], Array]
 ) -> Iterator[Told]:
-    """Yield the numbers of a calculation in its order: the inputs, what the gas brings, then step by step."""
+    """Yield the numbers in order: the inputs, what the gas brings, step by step, and results by another name."""
     for name in steps.leaves:
         yield Told(name, told(known[name]), "assumed" if name in steps.defaults else "as sent", None)
     for name, value in steps.constants.items():
@@ -159,6 +159,9 @@ def _chain(
         for key in node.results:
             if not _is_idle(known[key], lost):
                 yield Told(key, told(known[key]), node.step.formula, node.step)
+    for term, key in steps.keys.items():
+        if key.partition("@")[0] != term:
+            yield Told(term, told(known[key]), f"the same as {key}", None)
 
 
 def _is_idle(array: Array, lost: NDArray[np.bool_]) -> bool:

@@ -910,6 +910,17 @@ PICARD_2008 = Source(
     pages="149-155",
 )
 
+PINSENT_1956 = Source(
+    key="pinsent-1956",
+    authors="Pinsent, B. R. W.; Pearson, L.; Roughton, F. J. W.",
+    year=1956,
+    title="The kinetics of combination of carbon dioxide with hydroxide ions",
+    journal="Transactions of the Faraday Society",
+    doi="10.1039/TF9565201512",
+    volume="52",
+    pages="1512-1520",
+)
+
 PLUMMER_BUSENBERG_1982 = Source(
     key="plummer-busenberg-1982",
     authors="Plummer, L. N.; Busenberg, E.",

@@ -112,10 +112,22 @@ def test_a_series_by_table_is_the_series_by_json(client: FlaskClient) -> None:
     body = "time,given_transfer_velocity\n2026-01-01,20\n2026-01-02,35\n2026-01-05,5\n"
     inputs = {name: value for name, value in OWN.items() if name != "given_transfer_velocity"}
 
-    found = rows(client.post(address("equilibration", inputs), data=body))
+    found = rows(client.post(address("equilibration", inputs, time="@time"), data=body))
+    picked = rows(client.post(address("equilibration", inputs, pick="disequilibrium"), data=body))
     told = client.post("/v1/equilibration", json={**inputs, "given_transfer_velocity": [20, 35, 5], "time": [0, 1, 4]})
 
     assert [float(row["disequilibrium [1]"]) for row in found] == pytest.approx(values(told, "disequilibrium"))
+    assert [row["disequilibrium [1]"] for row in picked] == [row["disequilibrium [1]"] for row in found]
+
+
+def test_a_table_that_happens_to_hold_a_time_is_no_series(client: FlaskClient) -> None:
+    body = "time,mixed_layer_depth\n2026-01-02,40\n2026-01-01,50\nsome day,60\n"
+    inputs = {name: value for name, value in OWN.items() if name != "mixed_layer_depth"}
+
+    found = rows(client.post(address("equilibration", inputs), data=body))
+
+    assert [row["quality_flag"] for row in found] == ["1", "1", "1"]
+    assert "disequilibrium [1]" not in found[0]
 
 
 def test_without_a_series_a_time_passes_through(client: FlaskClient) -> None:

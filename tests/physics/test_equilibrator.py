@@ -54,7 +54,7 @@ def test_water_and_air_with_one_mole_fraction_are_in_equilibrium(gas: str) -> No
 
 @pytest.mark.parametrize(("gas", "method"), EVERY)
 def test_an_equilibrator_at_the_temperature_of_the_water_corrects_nothing(gas: str, method: str) -> None:
-    values = {**SEA, "water_temperature": np.array([-1.2, 3.0, 18.4, 31.0]), "water_mole_fraction": 380.0}
+    values: Values = {**SEA, "water_temperature": np.array([-1.2, 3.0, 18.4, 31.0]), "water_mole_fraction": 380.0}
     at_the_same = {**values, "equilibrator_temperature": values["water_temperature"]}
 
     assert bits(f(gas, at_the_same, method)) == bits(f(gas, values))
@@ -136,7 +136,7 @@ def flags(values: Values, **options: str) -> list[tuple[int, list[str]]]:
 
 
 def test_fresh_water_without_alkalinity_is_flagged_and_sea_water_is_not() -> None:
-    values = {
+    values: Values = {
         **SEA,
         "salinity": np.array([35.1, 19.99]),
         "water_mole_fraction": 380.0,
@@ -150,7 +150,7 @@ def test_fresh_water_without_alkalinity_is_flagged_and_sea_water_is_not() -> Non
 
 
 def test_a_temperature_left_uncorrected_is_flagged_only_where_it_differs() -> None:
-    values = {**SEA, "water_mole_fraction": 380.0, "equilibrator_temperature": np.array([18.4, 19.0])}
+    values: Values = {**SEA, "water_mole_fraction": 380.0, "equilibrator_temperature": np.array([18.4, 19.0])}
     same, other = flags(values, temperature_correction="none")
 
     assert same == (1, [])
@@ -161,7 +161,7 @@ def test_a_temperature_left_uncorrected_is_flagged_only_where_it_differs() -> No
 @pytest.mark.parametrize("correction", ["takahashi-1993", "takahashi-2009"])
 def test_the_corrections_of_sea_water_are_flagged_outside_2_to_28_degrees(correction: str) -> None:
     celsius = np.array([1.5, 15.0, 28.5])
-    values = {
+    values: Values = {
         **SEA,
         "water_temperature": celsius,
         "water_mole_fraction": 380.0,
@@ -235,7 +235,7 @@ def test_the_bicarbonate_of_hard_water_makes_up_for_part_of_what_the_headspace_t
 @pytest.mark.parametrize("gas", SOME_GASES)
 def test_gaps_stay_gaps_and_samples_stay_apart(gas: str) -> None:
     x = np.array([380.0, np.nan, 520.0])
-    values = {**BOTTLE, "water_mole_fraction": x, "headspace_ratio": np.array([0.5, 0.5, 2.0])}
+    values: Values = {**BOTTLE, "water_mole_fraction": x, "headspace_ratio": np.array([0.5, 0.5, 2.0])}
     together = f(gas, values)
     alone = f(gas, {**values, "water_mole_fraction": 520.0, "headspace_ratio": 2.0})
 

@@ -59,14 +59,15 @@ def test_the_cool_skin_is_taken_off_the_temperature_below_it_at_the_wind_of_ten_
 
 @pytest.mark.parametrize("same", [{"subskin_temperature": 18.4}, {"skin_temperature": 18.4}, {}])
 def test_without_a_skin_the_bulk_form_comes_out_bit_for_bit(same: dict[str, float]) -> None:
-    values = {**SEA, "water_fugacity": np.linspace(250.0, 600.0, 50)}
+    f_water = np.linspace(250.0, 600.0, 50)
+    values: Values = {**SEA, "water_fugacity": f_water}
     told = found({**values, **same}, {"skin": "none"})
     k, K0, f_air = told["transfer_velocity"] * 0.24, told["solubility_per_litre"], told["fugacity_in_air"]
 
     assert {name: bits(array) for name, array in told.items()} == {
         name: bits(array) for name, array in found(values).items()
     }
-    assert bits(told["flux"]) == bits(k * K0 * values["water_fugacity"] - k * K0 * f_air)
+    assert bits(told["flux"]) == bits(k * K0 * f_water - k * K0 * f_air)
 
 
 def test_a_cool_skin_raises_the_invasion_alone() -> None:

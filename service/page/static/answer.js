@@ -146,12 +146,12 @@ function oneSample(answer, question, digits) {
     const about = question.quantity.results.find((each) => each.name === name);
     const doubt = result.u?.[0] ?? result.u_inputs?.[0];
     return el("tr", { class: at === 0 ? "main" : null },
-      el("th", { scope: "row" }, words(name), el("span", { class: "help" }, about.meaning.replaceAll("`", ""))),
+      el("th", { scope: "row" }, words(name), el("span", { class: "help" }, question.result(name).meaning.replaceAll("`", ""))),
       el("td", { class: "number", "data-result": name, "data-value": String(result.values[0]) }, value(result, 0, digits)),
       hasDoubt && el("td", { class: "number" }, doubt === undefined || doubt === null ? "" : `± ${number(doubt, digits ?? 2)}`,
         result.u?.[0] === null && doubt !== undefined && doubt !== null ? el("span", { class: "help" }, "from the inputs alone") : ""),
       hasSpread && el("td", { class: "number" }, result.spread?.[0] === null || result.spread === undefined ? "" : number(result.spread[0], digits ?? 2)),
-      el("td", {}, resultUnit(about, question.description.unit_lists[about.units]), result.mass_of ? ` as ${result.mass_of}` : ""));
+      el("td", {}, resultUnit(about, question.description.unit_lists[question.result(name).units]), result.mass_of ? ` as ${result.mass_of}` : ""));
   });
   return scrolled("Results", el("table", { class: "results" },
     el("thead", {}, el("tr", {}, el("th", { scope: "col" }, "result"), el("th", { scope: "col", class: "number" }, "value"),
@@ -165,14 +165,18 @@ function severalSamples(answer, question, digits) {
   const shown = Math.min(answer.samples, ROWS_SHOWN);
   const rows = Array.from({ length: shown }, (_, at) => el("tr", {},
     el("th", { scope: "row", class: "number" }, String(at + 1)),
-    results.map(([, result]) => el("td", { class: "number" }, value(result, at, digits))),
-    el("td", {}, flag(answer.quality.flags[at]))));
+    el("td", {}, flag(answer.quality.flags[at])),
+    results.map(([, result]) => el("td", { class: "number" }, value(result, at, digits), doubtOf(result, at, digits)))));
   return el("div", {}, scrolled("Results by sample", el("table", { class: "results samples" },
-    el("thead", {}, el("tr", {}, el("th", { scope: "col", class: "number" }, "sample"),
-      results.map(([name, result]) => el("th", { scope: "col", class: "number" }, words(name), el("span", { class: "help" }, unit(result.unit)))),
-      el("th", { scope: "col" }, "flag"))),
+    el("thead", {}, el("tr", {}, el("th", { scope: "col", class: "number" }, "sample"), el("th", { scope: "col" }, "flag"),
+      results.map(([name, result]) => el("th", { scope: "col", class: "number" }, words(name), el("span", { class: "help" }, unit(result.unit)))))),
     el("tbody", {}, rows))),
   shown < answer.samples ? el("p", { class: "help" }, `${answer.samples - shown} more samples; as CSV they are all there, under Take away.`) : "");
+}
+
+function doubtOf(result, at, digits) {
+  const doubt = result.u?.[at] ?? result.u_inputs?.[at];
+  return doubt === undefined || doubt === null ? "" : el("span", { class: "help" }, ` ± ${number(doubt, digits ?? 2)}`);
 }
 
 export function flag(which) {

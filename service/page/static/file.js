@@ -2,7 +2,7 @@
 
 import { chooser, el, save } from "./dom.js";
 import { ask, askJson } from "./net.js";
-import { words } from "./numbers.js";
+import { unit, words } from "./numbers.js";
 import { state } from "./state.js";
 import { named, readTable, splitLine } from "./table.js";
 import { outcome } from "./series.js";
@@ -65,7 +65,6 @@ class FileView {
   // What each column is: by its own name, as an input it was said to be, or passed through.
   lay() {
     const inputs = this.question.inputs.filter((name) => !["request", "course"].includes(this.question.about(name).holds));
-    if (this.question.quantity.takes.includes("time")) inputs.push("time");
     const taken = new Set(inputs);
     const sample = splitLine(this.table.lines[0], this.table.delimiter);
     const rows = this.table.header.map((header, at) => {
@@ -88,17 +87,17 @@ class FileView {
       el("h3", {}, "Sent beside the table, from the question"), this.besides(), el("p", {}, go));
   }
 
-  unitField(header, unit) {
+  unitField(header, own) {
     const used = this.columns.get(header);
-    if (!used || used === ALONE || unit || used === "time") return "";
+    if (!used || used === ALONE || own || used === "time") return "";
     const about = this.question.about(used);
-    const field = chooser({ "aria-label": `unit of the column ${header}` }, (this.description.unit_lists[about.units] || [about.unit]).map((each) => [each, each]), this.units.get(header) || about.unit);
+    const field = chooser({ "aria-label": `unit of the column ${header}` }, (this.description.unit_lists[about.units] || [about.unit]).map((each) => [each, unit(each)]), this.units.get(header) || about.unit);
     field.addEventListener("change", () => this.units.set(header, field.value));
     return field;
   }
 
   used() {
-    const taken = new Set([...this.question.inputs, "time"]);
+    const taken = new Set(this.question.inputs);
     const pairs = this.table.header.map((header) => [this.columns.get(header) || named(header)[0], header]);
     return new Map(pairs.filter(([name]) => taken.has(name)));
   }
@@ -145,7 +144,7 @@ class FileView {
     this.result.replaceChildren();
     const answered = [];
     let header = "";
-    const whole = question.inputs.some((name) => question.about(name).holds === "series"); // its lines hang together
+    const whole = question.inputs.some((name) => question.about(name).holds === "series" && question.isNeeded(name)); // lines hang together
     const step = whole ? table.lines.length : PIECE;
     try {
       for (let at = 0; at < table.lines.length; at += step) {

@@ -103,7 +103,7 @@ class Form {
     if (this.rows.has(name)) return this.rows.get(name);
     const about = this.question.about(name);
     const units = this.description.unit_lists[about.units] || [about.unit];
-    return this.made(name, () => inputRow(name, about, units, this.question.quantity.uncertain.includes(name)));
+    return this.made(name, () => inputRow(name, about, units, this.question.uncertain.includes(name)));
   }
 
   // An option is made again where its choices changed, with the gas or the water.
@@ -192,17 +192,15 @@ class Form {
   // What is told beside a member of a side: what it needs, and what is used with it.
   along(side, member) {
     const beside = side.beside?.[member] ? [side.beside[member]] : [];
-    const brought = this.question.quantity.inputs
-      .filter((each) => each.with?.includes(member) || (this.question.about(each.name)["used-with"] || []).includes(member))
-      .map((each) => each.name);
+    const brought = this.question.inputs.filter((name) => this.question.broughtBy(name).includes(member)
+      || (this.question.about(name)["used-with"] || []).includes(member));
     return [...new Set([...beside, ...brought])].filter((name) => !side.members.includes(name));
   }
 
   placeConditions(placed) {
-    const needed = this.question.quantity.inputs
-      .filter((each) => !placed.has(each.name) && this.question.isNeeded(each)).map((each) => each.name);
-    const always = new Set(this.question.quantity.inputs.filter((each) => each.needed === "always").map((each) => each.name));
-    needed.sort((a, b) => always.has(b) - always.has(a));
+    const needed = this.question.inputs.filter((name) => !placed.has(name) && this.question.isNeeded(name));
+    const isAlways = (name) => this.question.needed(name) === "always";
+    needed.sort((a, b) => isAlways(b) - isAlways(a));
     const shown = new Set(needed);
     const names = needed.flatMap((name) => [name, ...this.question.inputs.filter((other) =>
       !placed.has(other) && !shown.has(other) && this.question.goesWith(other, new Set([name])))]);
@@ -214,7 +212,7 @@ class Form {
   placeDoubt(options) {
     const isAsked = [...state.values.keys()].some((name) => name.startsWith("u_"));
     this.root.classList.toggle("is-sure", isAsked);
-    this.doubt.fold.hidden = !this.question.quantity.uncertain.length;
+    this.doubt.fold.hidden = !this.question.uncertain.length;
     const toggle = this.rows.get("doubt") || this.made("doubt", () => {
       const field = el("input", { type: "checkbox", id: "in-doubt" });
       field.addEventListener("change", () => {

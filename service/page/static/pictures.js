@@ -47,9 +47,10 @@ async function shown(root, make) {
 function body(description, quantityName, question, without) {
   const quantity = description.quantities[quantityName];
   const taken = {};
-  const needs = new Map(quantity.inputs.map((each) => [each.name, each.needed]));
+  const needs = new Map(Object.entries(quantity.needs).map(([name, each]) => [name, each.needed]));
   for (const [name, value] of question.pairs()) {
     if (!quantity.takes.includes(name) || without.includes(name)) continue;
+    if (quantityName !== VELOCITY && question.about(name).unit !== undefined && !needs.has(name)) continue;
     if (["one_of_side", "with_input"].includes(needs.get(name))) continue; // what is known of the gas changes neither k nor Sc
     const about = question.about(name);
     const parts = value.split(";");

@@ -3,7 +3,8 @@
 import { state, encode } from "./state.js";
 
 // Written by the page itself, since they say how an answer is written and not what it is.
-export const OF_THE_FORM = ["form", "errors", "nocache", "detail", "decimal", "headers", "missing", "ignore", "strict"];
+export const OF_THE_FORM = ["form", "errors", "nocache", "detail", "headers", "missing", "ignore", "strict"];
+const DECIMAL_COMMA = /(\d),(?=\d)/g;
 const LONGEST_ADDRESS = 6000; // bytes; beyond it the question goes as the body of a POST
 
 export class Question {
@@ -13,8 +14,29 @@ export class Question {
     this.gas = state.values.get("gas");
   }
 
+  get uncertain() {
+    return this.inputs.filter((name) => !this.quantity.certain.includes(name));
+  }
+
+  // By which methods of which options an input is needed.
+  methodsOf(name) {
+    return this.quantity.needs[name]?.methods || this.description.needed_by[name] || {};
+  }
+
+  needed(name) {
+    return this.quantity.needs[name]?.needed || "never";
+  }
+
+  broughtBy(name) {
+    return this.quantity.needs[name]?.with || [];
+  }
+
   about(name) {
     return this.quantity.own[name] || this.description.names[name];
+  }
+
+  result(name) {
+    return this.description.results[name];
   }
 
   value(name) {
@@ -22,7 +44,7 @@ export class Question {
   }
 
   get inputs() {
-    return this.quantity.inputs.map((each) => each.name);
+    return this.quantity.takes.filter((name) => this.about(name).unit !== undefined);
   }
 
   get options() {
@@ -42,11 +64,12 @@ export class Question {
     return (byGas && (this.gas in byGas ? byGas[this.gas] : byGas.mostly)) ?? about?.default ?? "";
   }
 
-  isNeeded(input) {
-    if (input.needed === "always") return true;
-    if (input.needed === "with_input") return input.with.some((name) => this.value(name) !== "");
-    if (input.needed !== "by_method") return false;
-    return Object.entries(input.methods).some(([option, methods]) =>
+  isNeeded(name) {
+    const needed = this.needed(name);
+    if (needed === "always") return true;
+    if (needed === "with_input") return this.broughtBy(name).some((other) => this.value(other) !== "");
+    if (needed !== "by_method") return false;
+    return Object.entries(this.methodsOf(name)).some(([option, methods]) =>
       this.method(option).split(";").some((method) => methods.includes(method)));
   }
 
@@ -81,8 +104,15 @@ export class Question {
     return about.default !== undefined && (about["used-with"] || []).some((other) => shown.has(other));
   }
 
+  // Decimal commas are for the fields of the page alone: what is sent has points, and so has what comes back.
+  withPoint(name, value) {
+    const isNumber = this.about(name.replace(/^u_/, ""))?.unit !== undefined;
+    return isNumber && state.values.get("decimal") === "comma" ? value.replace(DECIMAL_COMMA, "$1.") : value;
+  }
+
   pairs(extra = []) {
-    const given = [...state.values].filter(([name, value]) => value.trim() !== "" && !OF_THE_FORM.includes(name));
+    const given = [...state.values].filter(([name, value]) => value.trim() !== "" && name !== "decimal" && !OF_THE_FORM.includes(name))
+      .map(([name, value]) => [name, this.withPoint(name, value)]);
     const named = new Set(extra.map(([name]) => name));
     return [...given.filter(([name]) => !named.has(name)), ...extra];
   }

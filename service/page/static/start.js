@@ -9,6 +9,7 @@ import { el } from "./dom.js";
 
 const VIEWS = { answer: "Answer", take: "Take away", pictures: "Pictures", file: "File", checks: "Checks" };
 const LATER = { take: "./take.js", pictures: "./pictures.js", file: "./file.js", checks: "./checks.js" };
+const NEED_ANSWER = { answer: true, take: true, pictures: true }; // beside the others a question may be unfinished
 const WIDE = matchMedia("(min-width: 62rem)");
 const PAUSE = 150; // ms that typing rests before the service is asked
 const views = {};
@@ -54,7 +55,7 @@ async function refresh() {
   const question = new Question(description);
   const shown = viewNamed();
   const answer = await view("answer");
-  answer.ask(question, showErrors);
+  if (shown in NEED_ANSWER) answer.ask(question, showErrors);
   if (shown !== "answer") (await view(shown)).show(question);
 }
 

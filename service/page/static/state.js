@@ -28,7 +28,7 @@ function firstQuantity(description) {
 
 export function takes(quantity, name) {
   return quantity.takes.includes(name)
-    || (name.startsWith("u_") && quantity.uncertain.includes(name.slice(2)))
+    || (name.startsWith("u_") && quantity.takes.includes(name.slice(2)) && !quantity.certain.includes(name.slice(2)))
     || (name.startsWith("unit.") && quantity.results.some((each) => each.name === name.slice(5)));
 }
 
