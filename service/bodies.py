@@ -7,6 +7,7 @@ from gunicorn.http.errors import ParseException
 from werkzeug.exceptions import ClientDisconnected
 
 from service.config import MEBIBYTE, Config
+from service.memory import give_back_what_is_free
 from service.physics.faults import Fault, Refused
 from service.places import SMALL_BODY, SMALL_BYTES, Gate, Turn
 
@@ -36,7 +37,7 @@ def read_body(request: Request, config: Config, gate: Gate, turn: Turn) -> bytes
     limit = max(config.csv_bytes, config.json_bytes)
     body = _whole(request, limit, gate)
     request.environ["catspaw.bytes"] = len(body)
-    if encoding in PACKED or body.startswith(GZIP_START):
+    if (body and encoding in PACKED) or body.startswith(GZIP_START):
         turn.large(len(body) * RATIO > MEBIBYTE)
         body = unpacked(body, limit)
         turn.end()
@@ -72,9 +73,13 @@ def _make_room(gate: Gate, size: int) -> None:
         return
     taken = gate.room.take(size)
 
+    def give_back() -> None:
+        gate.room.give(taken)
+        give_back_what_is_free()
+
     @after_this_request
-    def give_back(response: Response) -> Response:
-        response.call_on_close(lambda: gate.room.give(taken))
+    def at_its_end(response: Response) -> Response:
+        response.call_on_close(give_back)
         return response
 
 

@@ -14,6 +14,7 @@ from service.app import create_app
 from service.config import Config, strangers
 from service.counts import Counts, make_folder
 from service.health import begin_to_stop
+from service.memory import share_what_is_free
 from service.physics.declare import QUANTITIES
 from service.record import Recorder
 from service.worker import Worker
@@ -49,6 +50,7 @@ class Server(BaseApplication):  # type: ignore[misc]
 
     def __init__(self, config: Config) -> None:
         self.config_of_service = config
+        share_what_is_free()
         folder = make_folder() if config.metrics == "on" else None
         self.counts = Counts(folder) if folder else None
         super().__init__()

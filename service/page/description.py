@@ -6,8 +6,8 @@ from typing import Any
 
 from schemas.answers import FLAGS
 from schemas.parameters import Described
-from service.physics.catalogue import gas_record, parameterisations
 from service.physics.declare import GASES, QUANTITIES
+from service.physics.methods import transfer_methods
 
 UNCERTAIN = "x-uncertainty-of"
 UNIT_OF_RESULT = "unit."
@@ -83,8 +83,8 @@ def described(document: Mapping[str, Any]) -> dict[str, Any]:
         "flags": {str(flag): meaning for flag, meaning in FLAGS.items()},
         "limits": document["x-limits"],
         "unit_lists": document["x-unit-lists"],
-        "gases": {gas.name: {"title": gas.title, "formula": gas_record(gas)["formula"]} for gas in GASES.values()},
-        "waters": {each["name"]: each["water"] for each in parameterisations(None, None, None, None)},
+        "gases": {gas.name: {"title": gas.title, "formula": gas.formula} for gas in GASES.values()},
+        "waters": {name: list(step.water) for name, step in transfer_methods().items()},
         "names": names,
         "results": results,
         "needed_by": needed_by,

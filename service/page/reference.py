@@ -52,9 +52,7 @@ def paragraphs(text: str) -> list[list[Described]]:
 
 def pieces(text: str) -> list[Described]:
     """Return a text in pieces of which every second one stood between back-ticks and is code."""
-    return [
-        {"text": piece, "code": place % 2 == 1} for place, piece in enumerate(text.replace("\n", " ").split("`"))
-    ]
+    return [{"text": piece, "code": place % 2 == 1} for place, piece in enumerate(text.replace("\n", " ").split("`"))]
 
 
 def unit_anchor(name: str) -> str:

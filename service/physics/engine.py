@@ -32,8 +32,8 @@ class _Planner:
         """Place all that a term needs and return the key under which its value will stand."""
         if term in swap:
             return self.visit(swap[term], {})
-        cone = self.choose.cone(term) if swap else frozenset()
-        swap = {old: new for old, new in swap.items() if old in cone and self.choose.same(new) != old}
+        reach = self.choose.reach(term) if swap else frozenset()
+        swap = {old: new for old, new in swap.items() if old in reach and self.choose.same(new) != old}
         suffix = "@" + ",".join(f"{old}={new}" for old, new in swap.items()) if swap else ""
         if term + suffix not in self.keys:
             self.keys[term + suffix] = self._find(term, swap, suffix)
@@ -44,7 +44,7 @@ class _Planner:
             inner = {old: swap.get(new, new) for old, new in DERIVED[term].replace.items()}
             return self.visit(DERIVED[term].of, {**swap, **inner})
         if step := self.choose.select(term):
-            return self.visit(term, {}) if swap and step.in_situ else self._place(term, step, swap, suffix)
+            return self._place(term, step, swap, suffix)
         constant = None if term in self.choose.given else self.choose.constant(term)
         if constant is None:
             return self._leaf(term)

@@ -193,6 +193,7 @@ class Chooser:
         blocks = [block for block in gas.blocks if self._method_of(block.result) == block.method]
         self.defaults = {name: value for block in blocks for name, value in block.supplies.items()}
         self._cones: dict[str, frozenset[str]] = {}
+        self._reaches: dict[str, frozenset[str]] = {}
         self._open: set[str] = set()
 
     def _method_of(self, term: str) -> str | None:
@@ -237,6 +238,18 @@ class Chooser:
             self._cones[term] = frozenset({term}).union(*(self.cone(name) for name in self._needs(term)))
             self._open.discard(term)
         return self._cones[term]
+
+    def reach(self, term: str) -> frozenset[str]:
+        """Return the terms in whose place another one would change a term: none beyond a step in situ."""
+        if term not in self._reaches:
+            self.cone(term)  # refuses a circle
+            within = [self.reach(name) for name in self._needs(term)]
+            if term in DERIVED and term not in self.given:
+                within[0] -= DERIVED[term].replace.keys()
+            elif (step := self.select(term)) and step.in_situ:
+                within = []
+            self._reaches[term] = frozenset({term}).union(*within)
+        return self._reaches[term]
 
     def _needs(self, term: str) -> Iterable[str]:
         if term in DERIVED and term not in self.given:

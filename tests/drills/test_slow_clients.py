@@ -74,9 +74,9 @@ def test_others_are_served_beside_fifty_slow_clients(tmp_path: Path, kind: str) 
 
 @pytest.mark.parametrize("kind", ["heads", "bodies"])
 def test_slow_clients_who_hold_every_thread_are_let_go(tmp_path: Path, kind: str) -> None:
-    with served(tmp_path, {"THREADS": 2, "SLOW_SECONDS": 2}) as one:
+    with served(tmp_path, {"THREADS": 4, "SLOW_SECONDS": 1}) as one:
         expected = answers_of(one)
-        with slow_clients(one.port, *SLOW[kind], count=16) as connections:
+        with slow_clients(one.port, *SLOW[kind], count=24) as connections:
             first, *_ = [received(connection) for connection in connections]
             asked_beside(one, expected)
 

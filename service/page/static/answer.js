@@ -22,12 +22,15 @@ export function answerView(root) {
   async function ask(question, showErrors) {
     const [url, options] = question.request([["detail", "steps"]]);
     const asked = url + (options.body || "");
-    if (asked === lastAsked) return;
+    if (asked === lastAsked) {
+      root.removeAttribute("aria-busy");
+      return;
+    }
     lastAsked = asked;
     running?.abort();
     running = new AbortController();
     const { signal } = running;
-    body.setAttribute("aria-busy", "true");
+    root.setAttribute("aria-busy", "true");
     try {
       const answer = await askJson(url, { ...options, signal });
       if (signal.aborted) return;
@@ -40,7 +43,7 @@ export function answerView(root) {
       showErrors(problem.errors || []);
       refuse(problem);
     }
-    body.removeAttribute("aria-busy");
+    root.removeAttribute("aria-busy");
   }
 
   function show(answer, question) {

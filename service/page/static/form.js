@@ -42,7 +42,7 @@ class Form {
     this.further = fold("Further conditions");
     this.options = fold("Methods and options");
     this.doubt = fold("How sure");
-    this.root.replaceChildren(this.first, this.note, el("h3", {}, "Conditions"), this.conditions, this.sides,
+    this.root.replaceChildren(el("h2", { class: "unseen" }, "The question"), this.first, this.note, el("h3", {}, "Conditions"), this.conditions, this.sides,
       this.further.fold, this.options.fold, this.doubt.fold);
     this.update();
   }
@@ -132,7 +132,7 @@ class Form {
   parameterisations(fitting, assumed) {
     const { waters } = this.description;
     const water = this.question.value("water");
-    const fits = (method) => !water || !waters[method] || waters[method].includes(water);
+    const fits = (method) => !water || !waters[method]?.length || waters[method].includes(water);
     const group = (label, methods) => ({ label, choices: methods.map((each) => [each, each]) });
     const groups = [group(water ? `made for ${water}` : "methods", fitting.filter(fits)), group("made for other water", fitting.filter((each) => !fits(each)))];
     const every = water ? [["all", `every method that fits ${water}`]] : [];

@@ -30,6 +30,7 @@ export async function ask(address, { signal, method = "GET", body, type, accept 
     throw new Problem(0, { detail: "The service does not answer: it may have been stopped, or the network is down." });
   }
   if (response.status === 401) {
+    await response.text(); // so that the connection is free while the person looks for the token
     await tokenGiven();
     return ask(address, { signal, method, body, type, accept });
   }

@@ -81,9 +81,9 @@ async function askedOf(quantity, taken, axis, signal) {
 async function windPlate(description, question, signal) {
   const water = question.value("water") || "ocean";
   const xs = Array.from({ length: WIND_TO / WIND_STEP + 1 }, (_, at) => at * WIND_STEP);
-  const leaveOut = ["parameterisation", "wind_speed", "wind_height", "wind_profile", "pick", "unit", "detail", "wind_speed_variance", "weibull_shape"];
+  const leaveOut = ["parameterisation", "wind_speed", "wind_height", "wind_profile", "pick", "unit", "detail", "wind_speed_variance", "weibull_shape", "u_methods", "u_unpublished", "uncertainty_method"];
   const taken = body(description, VELOCITY, question, leaveOut);
-  const common = { ...taken, water, wind_speed: xs, detail: "brief", u_methods: "1", pick: ["transfer_velocity", "wind_speed_10m", "friction_velocity_air"] };
+  const common = { ...taken, water, wind_speed: xs, detail: "brief", u_methods: "1", u_unpublished: 0, pick: ["transfer_velocity", "wind_speed_10m", "friction_velocity_air"] };
   const listed = askJson(`/v1/parameterisations?water=${water}&gas=${question.gas}`, { signal });
   const every = await askedOf(VELOCITY, { ...common, parameterisation: "all" }, ["wind_speed", "water", "parameterisation"], signal);
   const records = new Map((await listed).parameterisations.map((each) => [each.name, each]));
@@ -127,7 +127,7 @@ function method(name, outcome, record, xs, isChosen, own) {
     return value === null || ((range.from ?? -Infinity) <= value && value <= (range.to ?? Infinity));
   }));
   const values = results.transfer_velocity.values;
-  const u = results.transfer_velocity.u || [];
+  const u = record?.uncertainty ? results.transfer_velocity.u || [] : []; // of those that publish none there is none to draw
   return { name, record, xs, values, u, isInside, isChosen, of: results.transfer_velocity.unit, atOwn: own === null ? null : between(xs, values, own) };
 }
 

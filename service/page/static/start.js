@@ -35,14 +35,14 @@ async function showView(focus = false) {
   const name = viewNamed();
   for (const each of Object.keys(VIEWS)) {
     const link = document.querySelector(`.views a[href="#${each}"]`);
-    document.getElementById(`view-${each}`).hidden = each !== name;
+    document.getElementById(each).hidden = each !== name;
     if (each === name) link.setAttribute("aria-current", "page");
     else link.removeAttribute("aria-current");
   }
   document.body.dataset.view = name;
   document.title = name === "answer" ? "Catspaw: air-water gas exchange" : `Catspaw: ${VIEWS[name].toLowerCase()}`;
   fold();
-  if (focus) document.getElementById(`view-${name}`).focus({ preventScroll: WIDE.matches });
+  if (focus) document.getElementById(name).focus({ preventScroll: WIDE.matches });
   await refresh();
 }
 
@@ -73,6 +73,7 @@ async function begin() {
   const form = buildForm(document.getElementById("form"), description);
   whenChanged(() => {
     form.update();
+    document.getElementById("answer-body").setAttribute("aria-busy", "true");
     clearTimeout(timer);
     timer = setTimeout(refresh, PAUSE);
   });
