@@ -8,7 +8,7 @@ from service.config import MEBIBYTE, Config
 
 SMALL_SAMPLES = 1_000  # a request of no more never waits
 SMALL_BYTES = 100_000  # a body of no more is read into numbers without waiting: some 1,000 rows of ten columns
-SMALL_BODY = MEBIBYTE  # a body of no more is held without waiting
+SMALL_BODY = MEBIBYTE // 2  # a body of no more is held without waiting
 BODIES = 3  # of the longest kind that a worker holds at once
 
 

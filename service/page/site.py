@@ -1,4 +1,4 @@
-"""The page for people at ``/``, the reference at ``/reference``, and their files; other addresses know nothing of it."""
+"""The page for people at ``/``, the reference at ``/reference``, and the files they are made of."""
 
 import gzip
 import hashlib
@@ -88,7 +88,7 @@ class Site:
         """Return a file or page, compressed for those that can read it, or that it has not changed."""
         plain, small = self.packed(name, content)
         response = Response(plain, content_type=kind)
-        if "gzip" in request.accept_encodings and len(small) < len(plain):
+        if request.accept_encodings["gzip"] and len(small) < len(plain):
             response = Response(small, content_type=kind, headers={"Content-Encoding": "gzip"})
         response.headers["Vary"] = "Accept-Encoding"
         response.headers["Content-Security-Policy"] = POLICY

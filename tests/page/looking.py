@@ -49,7 +49,7 @@ class Look:
         """Press a button that saves a file; return the file."""
         with self.page.expect_download() as waiting:
             self.page.get_by_role("button", name=button).first.click()
-        kept = folder / waiting.value.suggested_filename
+        kept = folder / str(waiting.value.suggested_filename)
         waiting.value.save_as(kept)
         return kept
 

@@ -165,7 +165,12 @@ def test_the_anchors_of_the_reference_are_there_and_are_one_each() -> None:
 
 def test_the_service_makes_nothing_of_the_page_until_it_is_asked_for_it(monkeypatch: pytest.MonkeyPatch) -> None:
     made: list[str] = []
-    monkeypatch.setattr("service.page.site.document", lambda *_: made.append("document") or DOCUMENT)
+
+    def make(*_: Any) -> dict[str, Any]:
+        made.append("document")
+        return DOCUMENT
+
+    monkeypatch.setattr("service.page.site.document", make)
     client = create_app(Config()).test_client()
     client.get("/v1/schmidt-number?gas=co2&water_temperature=20&salinity=35")
 

@@ -4,7 +4,7 @@ import { el } from "./dom.js";
 import { askJson } from "./net.js";
 import { number, unit, withUnit, words } from "./numbers.js";
 import { resultUnit } from "./rows.js";
-import { set, state } from "./state.js";
+import { changed, forget, set, state } from "./state.js";
 import { drawWater } from "./water.js";
 
 const ROWS_SHOWN = 200;
@@ -83,11 +83,22 @@ export function answerView(root) {
     body.replaceChildren(
       el("p", { class: "refusal" }, problem.errors.length ? "No answer yet:" : problem.message),
       el("ul", { class: "reasons" }, listed),
+      leaveOut(problem.errors.filter((each) => each.code === "unused").map((each) => each.name)),
       problem.more ? el("p", { class: "help" }, `and ${problem.more} more`) : "",
       problem.document.type ? el("p", { class: "help" }, el("a", { href: problem.document.type }, "What this kind of refusal means")) : "");
   }
 
   return { ask };
+}
+
+// One press leaves out all that the methods chosen now do not use.
+function leaveOut(names) {
+  if (!names.length) return "";
+  const press = () => {
+    for (const name of names) forget(name);
+    changed();
+  };
+  return el("p", {}, el("button", { type: "button", onclick: press }, `Leave out ${names.map(words).join(", ")}`));
 }
 
 // A reason that begins with the name of an input is told beside that input, too.

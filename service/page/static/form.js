@@ -4,7 +4,7 @@ import { chooser, el } from "./dom.js";
 import { withUnit, words } from "./numbers.js";
 import { Question } from "./question.js";
 import { inputRow, optionRow } from "./rows.js";
-import { changed, changeQuantity, set, state } from "./state.js";
+import { changed, changeQuantity, forget, set, state } from "./state.js";
 
 const FIRST = ["gas", "water", "parameterisation"]; // told before the conditions, since these depend on them
 const OF_DOUBT = ["uncertainty_method", "draws", "seed", "coverage", "common"];
@@ -175,8 +175,8 @@ class Form {
     const field = el("select", { id, "aria-describedby": `error-${side.name}` });
     field.addEventListener("change", () => {
       for (const name of side.members) {
-        state.values.delete(name);
-        state.values.delete(`u_${name}`);
+        forget(name);
+        forget(`u_${name}`);
       }
       state.isExample = false;
       this.chosen.set(side.name, field.value);
@@ -218,7 +218,7 @@ class Form {
       field.addEventListener("change", () => {
         if (field.checked) set("u_methods", "1");
         else {
-          for (const name of [...state.values.keys()].filter(ofDoubt)) state.values.delete(name);
+          for (const name of [...state.values.keys()].filter(ofDoubt)) forget(name);
           changed();
         }
       });

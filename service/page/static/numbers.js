@@ -3,6 +3,7 @@
 const RAISED = { "-": "⁻", 0: "⁰", 1: "¹", 2: "²", 3: "³", 4: "⁴", 5: "⁵", 6: "⁶", 7: "⁷", 8: "⁸", 9: "⁹" };
 const MICRO = /\bu(?=(?:mol|atm|bar|g|M|L)\b)/g;
 const DIGITS = 5;
+const MANY_DIGITS = /(?<=^−?)\d{5,}/; // before the point
 const SMALL = 1e-3; // below which a number is written with a power of ten
 
 const raised = (text) => [...text].map((sign) => RAISED[sign] || sign).join("");
@@ -10,7 +11,7 @@ const raised = (text) => [...text].map((sign) => RAISED[sign] || sign).join("");
 export function number(value, digits = DIGITS) {
   if (value === null || value === undefined || !Number.isFinite(value)) return "none";
   const [mantissa, exponent] = shortened(value, digits).split("e");
-  const text = mantissa.replace("-", "−");
+  const text = mantissa.replace("-", "−").replace(MANY_DIGITS, (whole) => whole.replace(/\B(?=(\d{3})+$)/g, "\u202f"));
   return exponent ? `${text} × 10${raised(String(Number(exponent)))}` : text;
 }
 

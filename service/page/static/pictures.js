@@ -43,14 +43,18 @@ async function shown(root, make) {
   }
 }
 
-// What the question tells that another quantity takes, one sample of it; names in `without` are the axis.
-function body(description, quantityName, question, without) {
+// What the question tells that another quantity takes, one sample of it: names in `without` are the axis, and of
+// inputs that only some methods need those are left out that none of `methods` needs.
+function body(description, quantityName, question, without, methods = []) {
   const quantity = description.quantities[quantityName];
+  const isUsed = (name) => Object.entries(quantity.needs[name].methods || description.needed_by[name]).some(([option, needing]) =>
+    (option === "parameterisation" ? methods : question.method(option).split(";")).some((each) => needing.includes(each)));
   const taken = {};
   const needs = new Map(Object.entries(quantity.needs).map(([name, each]) => [name, each.needed]));
   for (const [name, value] of question.pairs()) {
     if (!quantity.takes.includes(name) || without.includes(name)) continue;
-    if (quantityName !== VELOCITY && question.about(name).unit !== undefined && !needs.has(name)) continue;
+    if (question.about(name).unit !== undefined && !needs.has(name)) continue; // not needed by any method
+    if (needs.get(name) === "by_method" && !isUsed(name)) continue;
     if (["one_of_side", "with_input"].includes(needs.get(name))) continue; // what is known of the gas changes neither k nor Sc
     const about = question.about(name);
     const parts = value.split(";");
@@ -82,16 +86,19 @@ async function windPlate(description, question, signal) {
   const water = question.value("water") || "ocean";
   const xs = Array.from({ length: WIND_TO / WIND_STEP + 1 }, (_, at) => at * WIND_STEP);
   const leaveOut = ["parameterisation", "wind_speed", "wind_height", "wind_profile", "pick", "unit", "detail", "wind_speed_variance", "weibull_shape", "u_methods", "u_unpublished", "uncertainty_method"];
-  const taken = body(description, VELOCITY, question, leaveOut);
+  const fitting = Object.entries(description.waters).filter(([, waters]) => waters.includes(water)).map(([name]) => name);
+  const taken = body(description, VELOCITY, question, leaveOut, fitting);
   const common = { ...taken, water, wind_speed: xs, detail: "brief", u_methods: "1", u_unpublished: 0, pick: ["transfer_velocity", "wind_speed_10m", "friction_velocity_air"] };
   const listed = askJson(`/v1/parameterisations?water=${water}&gas=${question.gas}`, { signal });
   const every = await askedOf(VELOCITY, { ...common, parameterisation: "all" }, ["wind_speed", "water", "parameterisation"], signal);
   const records = new Map((await listed).parameterisations.map((each) => [each.name, each]));
   const outcomes = new Map(Object.entries(every.by_parameterisation || {}));
   if (!every.by_parameterisation) outcomes.set(every.methods?.transfer_velocity?.[0]?.name || "the method", every);
-  const chosen = new Set(question.method("parameterisation").split(";").filter((name) => name !== "all"));
+  const told_ = question.value("parameterisation").split(";").filter((name) => name && name !== "all");
+  const usual = question.method("parameterisation");
+  const chosen = new Set(told_.length ? told_ : fitting.filter((name) => name === usual));
   const own = await userWind(description, question, signal);
-  for (const name of chosen) await addChosen(name, common, outcomes, records, signal);
+  for (const name of chosen) await addChosen(name, { ...common, ...body(description, VELOCITY, question, leaveOut, [name]) }, outcomes, records, signal);
   const methods = [...outcomes].map(([name, outcome]) => method(name, outcome, records.get(name), xs, chosen.has(name), own));
   return [windFigure(methods, water, question, own), windTable(methods, own)];
 }
@@ -110,7 +117,8 @@ async function addChosen(name, common, outcomes, records, signal) {
 async function userWind(description, question, signal) {
   if (!question.value("wind_speed")) return null;
   try {
-    const taken = body(description, VELOCITY, question, ["parameterisation", "pick", "unit", "detail"]);
+    const usual = description.names.parameterisation["default-by-gas"].mostly; // any will do: the wind is the same for all
+    const taken = body(description, VELOCITY, question, ["water", "parameterisation", "pick", "unit", "detail"], [usual]);
     const answer = await askedOf(VELOCITY, { ...taken, pick: "wind_speed_10m", detail: "brief" }, ["wind_speed"], signal);
     return answer.results.wind_speed_10m.values[0];
   } catch (problem) {
@@ -188,7 +196,7 @@ function rangeText(record) {
 
 function point(each, picture, group) {
   unpoint(picture);
-  group.classList.add("pointed");
+  for (const part of picture.svg.querySelectorAll(`[data-method="${CSS.escape(each.name)}"]`)) part.classList.add("pointed");
   const band = each.xs.map((x, at) => [x, each.values[at] - each.u[at], each.u[at] === null || each.u[at] === undefined ? NaN : each.values[at] + each.u[at]]);
   picture.area(band, "band", group);
   picture.inside.append(group);
@@ -204,7 +212,8 @@ function labels(picture, groups) {
   const placed = groups.map(({ each, group, points }) => {
     const seen = points.filter(([, y]) => y !== null && y <= picture.y.to);
     const [x, y] = seen.at(-1) || [picture.x.to, 0];
-    return { each, group, fromX: picture.px(x), fromY: picture.py(y), at: picture.py(y) };
+    const at = x < picture.x.to ? picture.top : picture.py(y); // those that leave by the top stand first, from the left
+    return { each, group, fromX: picture.px(x), fromY: picture.py(y), at };
   }).sort((a, b) => a.at - b.at || a.fromX - b.fromX);
   const gap = Math.min(15, (picture.bottom - picture.top) / Math.max(placed.length, 1));
   let last = picture.top - gap;
@@ -212,7 +221,7 @@ function labels(picture, groups) {
   let next = picture.bottom + gap;
   for (const label of placed.toReversed()) next = label.at = Math.min(label.at, next - gap);
   for (const { each, group, fromX, fromY, at } of placed) {
-    const label = svg("g", { class: group.getAttribute("class") },
+    const label = svg("g", { class: group.getAttribute("class").replace("method", "name"), "data-method": each.name },
       svg("path", { class: "leader", d: `M${fromX.toFixed(1)} ${fromY.toFixed(1)}L${picture.right + 14} ${at}h6` }),
       svg("text", { class: "label", x: picture.right + 23, y: at + 4 }, each.name));
     label.addEventListener("pointerenter", () => group.point());

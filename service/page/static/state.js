@@ -4,6 +4,7 @@ const OF_PAGE = ["quantity", "check_gas", "check_text", "window", "time"]; // na
 
 export const state = { quantity: "", values: new Map(), page: new Map(), isExample: false };
 const listeners = [];
+const remembered = new Map(); // what was told for other quantities, for when the person comes back to them
 let timer = 0;
 
 export function read(description) {
@@ -39,20 +40,30 @@ export function example(quantity) {
 // Another quantity begins with its own example, in which what was already told takes its place.
 export function changeQuantity(description, name) {
   const quantity = description.quantities[name];
-  const before = state.values;
+  for (const [key, value] of state.values) remembered.set(key, value);
   state.quantity = name;
   if (state.isExample) {
     state.values = example(quantity);
   } else {
-    const kept = new Set([...example(quantity).keys(), ...quantity.sides.flatMap((side) => side.members)]);
+    const kept = new Set([...example(quantity).keys(), ...neededSides(quantity).flatMap((side) => side.members)]);
     const wanted = (key) => takes(quantity, key) && (kept.has(key) || ["gas", "water", "parameterisation"].includes(key));
-    state.values = new Map([...before].filter(([key]) => wanted(key)));
+    state.values = new Map([...remembered].filter(([key]) => wanted(key)));
   }
   changed();
 }
 
+export function forget(name) {
+  state.values.delete(name);
+  remembered.delete(name);
+}
+
+function neededSides(quantity) {
+  const gas = remembered.get("gas");
+  return quantity.sides.filter((side) => side.needed_for_gases.includes(gas) || side.needed_for_results.length);
+}
+
 export function set(name, value) {
-  if (value === "" || value === null || value === undefined) state.values.delete(name);
+  if (value === "" || value === null || value === undefined) forget(name);
   else state.values.set(name, value);
   if (name !== "gas") state.isExample = false;
   changed();
