@@ -52,8 +52,8 @@ def _answered(
 ) -> tuple[Response, Request]:
     form = _form_asked(request)
     sent = read(request, config, gate, turn)
-    names = _column_names(quantity, sent.raw)
-    raw = bind(sent.table.header, sent.raw, names) if sent.table else _without_columns(sent.raw)
+    table = sent.table
+    raw = bind(table.header, sent.raw, _column_names(quantity, sent.raw)) if table else _without_columns(sent.raw)
     checked = load(quantity, raw)
     form = form or _form_for(request, sent)
     if checked.series and form != "json":
