@@ -16,6 +16,7 @@ from typing import Any
 
 CONTENT_TYPE = "text/plain; version=0.0.4; charset=utf-8"
 FOLDER_VARIABLE = "PROMETHEUS_MULTIPROC_DIR"  # where the client library looks for it
+SHARED_MEMORY = "/dev/shm"
 PREFIX, ALIVE, LOCK = "catspaw-counts-", "alive", "lock"
 KINDS = ("counter", "histogram")
 SECONDS = (0.005, 0.01, 0.025, 0.05, 0.075, 0.1, 0.25, 0.5, 0.75, 1.0, 2.5, 5.0, 7.5, 10.0)  # as OpenTelemetry has them
@@ -93,13 +94,15 @@ class Counts:
 
     def end(self) -> None:
         """Remove the files."""
+        self._alive.close()
         shutil.rmtree(self.folder, ignore_errors=True)
 
 
 def make_folder() -> Path | None:
     """Return a new folder to count in, in memory if there is a place, or None where nothing can be written."""
-    for parent in (Path("/dev/shm"), Path(tempfile.gettempdir())):
+    for place in (SHARED_MEMORY, None):
         with suppress(OSError):
+            parent = Path(place or tempfile.gettempdir())  # which fails where there is none
             for old in parent.glob(f"{PREFIX}*"):
                 _remove_if_left(old)
             folder = Path(tempfile.mkdtemp(prefix=PREFIX, dir=parent))

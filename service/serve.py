@@ -12,7 +12,7 @@ from gunicorn.arbiter import Arbiter
 from schemas.examples import quantity_examples
 from service.app import create_app
 from service.config import Config, strangers
-from service.counts import Counts, make_folder
+from service.counts import SHARED_MEMORY, Counts, make_folder
 from service.health import begin_to_stop
 from service.memory import share_what_is_free
 from service.physics.declare import QUANTITIES
@@ -21,7 +21,6 @@ from service.worker import Worker
 
 LOOPBACK = ("127.", "localhost", "[::1]", "unix:")
 STUCK_SECONDS = 120  # a worker whose main loop does not turn for so long is replaced
-SHARED_MEMORY = "/dev/shm"
 
 
 class Master(Arbiter):  # type: ignore[misc]  # gunicorn ships no types

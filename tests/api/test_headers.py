@@ -36,7 +36,8 @@ def test_every_answer_tells_version_and_request_and_forbids_sniffing(
     assert answer.status_code == status
     assert answer.headers["Catspaw-Version"] == service_version()
     assert re.fullmatch(r"[A-Za-z0-9._-]{1,64}", answer.headers["X-Request-ID"])
-    assert answer.headers["X-Content-Type-Options"] == "nosniff"
+    assert answer.headers.getlist("X-Content-Type-Options") == ["nosniff"]
+    assert answer.headers.getlist("Referrer-Policy") == ["no-referrer"]
     assert answer.headers["Access-Control-Allow-Origin"] == "*"
     assert "X-Request-ID" in answer.headers["Access-Control-Expose-Headers"]
 

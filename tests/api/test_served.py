@@ -1,5 +1,6 @@
 """What only a real server shows: framing, old clients, and requests that end too early."""
 
+import json
 import os
 import re
 import socket
@@ -158,3 +159,36 @@ def test_expecting_a_go_ahead_is_answered(port: int) -> None:
 
     assert status in (100, 200)
     assert b'"flux"' in rest
+
+
+# What never becomes a request of the application: bytes, and the status they are answered with.
+UNREADABLE = [
+    (b"GET /v1 HTTP/1.1\r\n\r\n", 400),
+    (b"get /v1 HTTP/1.1\r\nHost: x\r\n\r\n", 400),
+    (b"GET /v1 HTTP/1.1\nHost: x\n\n", 400),
+    (b"GET /v1 HTTP/1.1\r\nHost: x\r\nHost: y\r\n\r\n", 400),
+    (START + b"Content-Length: 3\r\nTransfer-Encoding: chunked\r\n\r\n0\r\n\r\n", 400),
+    (START + b"Transfer-Encoding: unheard-of\r\n\r\n", 400),
+    (START + b"Expect: wonders\r\n\r\n", 417),
+    (b"GET /" + b"x" * 9000 + b" HTTP/1.1\r\nHost: x\r\n\r\n", 414),
+    (START + b"X-Long: " + b"x" * 9000 + b"\r\n\r\n", 431),
+]
+
+
+@pytest.mark.parametrize(("request_", "expected"), UNREADABLE, ids=lambda each: repr(each)[-30:])
+def test_what_is_not_http_is_a_problem_document_too(port: int, request_: bytes, expected: int) -> None:
+    status, head, rest = said(port, request_, end=True)
+    problem = json.loads(rest)
+
+    assert status == problem["status"] == expected
+    assert b"Content-Type: application/problem+json" in head
+    assert b"X-Request-ID: " + problem["instance"].encode() in head
+    assert problem["errors"][0]["reason"]
+
+
+def test_nothing_tells_what_serves(port: int) -> None:
+    good, bad = requests.get(f"http://127.0.0.1:{port}/v1", timeout=20), said(port, b"?\r\n\r\n", end=True)
+
+    assert "Server" not in good.headers
+    assert b"Server" not in bad[1]
+    assert b"gunicorn" not in bad[1] + bad[2]

@@ -20,6 +20,7 @@ from tests.api.questions import body, flux, table
 ROOT = Path(__file__).parents[2]
 LISTENING = re.compile(r"Listening at: http://127\.0\.0\.1:(\d+)")
 ENVIRONMENT = {name: value for name, value in os.environ.items() if not name.startswith("CATSPAW_")}
+BARE = {"PATH": "/usr/bin:/bin"}
 PATIENCE = 60.0  # s
 SERVE = (sys.executable, "-m", "service", "serve")
 

@@ -198,3 +198,34 @@ def test_the_largest_bodies_at_full_concurrency_stay_within_what_is_granted(tmp_
     assert peak * 1024 < TOO_MANY
     assert (after, workers) == (200, 2)
     assert "Perhaps out of memory" not in said
+
+
+COST = """
+import sys, time
+from datetime import timedelta
+from service.counts import Counts, make_folder
+from service.record import Recorder
+Recorder.counts = Counts(make_folder())
+recorder, took = object.__new__(Recorder), timedelta(seconds=0.001)
+environ = {"REQUEST_METHOD": "POST", "PATH_INFO": "/v1/flux", "REMOTE_ADDR": "127.0.0.1", "catspaw.id": "0123456789abcdef"}
+environ |= {"catspaw.route": "/v1/flux", "catspaw.samples": 1, "catspaw.bytes": 120}
+class Answer:
+    status, sent = "200 OK", 900
+costs = []
+for _ in range(5):
+    began = time.process_time()
+    for _ in range(2000):
+        recorder.access(Answer, None, environ, took)
+    costs.append((time.process_time() - began) / 2000)
+Recorder.counts.end()
+sys.stderr.write(repr(min(costs)))
+"""
+
+
+def test_log_and_counts_together_cost_at_most_sixty_microseconds(tmp_path: Path) -> None:
+    with (tmp_path / "lines").open("wb") as sink:
+        command = [sys.executable, "-c", COST]
+        done = subprocess.run(command, cwd=ROOT, stdout=sink, stderr=subprocess.PIPE, check=True)
+
+    assert (tmp_path / "lines").read_bytes().count(b"\n") == 10_000
+    assert float(done.stderr) < 60e-6  # s of the processor

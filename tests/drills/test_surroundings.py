@@ -8,11 +8,10 @@ from pathlib import Path
 
 import pytest
 
-from tests.drills.serving import ENVIRONMENT, SERVE, answers_of, served
+from tests.drills.serving import BARE, ENVIRONMENT, SERVE, answers_of, served
 
 pytestmark = pytest.mark.drills
 NOBODY = "65534"
-BARE = {"PATH": "/usr/bin:/bin"}
 SURROUNDINGS: dict[str, dict[str, str]] = {
     "as it is": {},
     "another time zone": {"TZ": "Pacific/Apia"},

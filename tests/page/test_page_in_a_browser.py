@@ -213,7 +213,8 @@ def test_an_audit_of_accessibility_finds_nothing(
             page.set_input_files("#file-field", long_file)
             page.wait_for_selector("button.go")
         for each in page.query_selector_all("details:not([open]) > summary"):
-            each.click()
+            if each.is_visible():
+                each.click()
 
         assert audit(page) == []
         assert page.evaluate("document.documentElement.scrollWidth") <= width

@@ -75,7 +75,7 @@ function checkRow(each) {
     el("td", {}, measure(each), el("span", { class: "help" },
       `${each.holds ? "" : "does not hold: "}${number(each.difference, 2)} of ${number(each.tolerance, 2)} allowed`)),
     el("td", {}, each.where, el("span", { class: "help" }, source(each.citation, each.doi)),
-      each.note ? el("span", { class: "help" }, ` · ${each.note}`) : ""));
+      each.note ? el("span", { class: "help" }, each.note) : ""));
 }
 
 // A line as long as what is allowed to either side, and a dot where the difference is.

@@ -32,7 +32,8 @@ export function unit(text) {
     .replace(/\bdegC\b/g, "°C")
     .replace(/\bdegF\b/g, "°F")
     .replace(/\bdegree\b/g, "°")
-    .replace(/([A-Za-z])(-?\d+)(?=\s|$)/g, (_, letter, power) => letter + raised(power));
+    .replace(/([A-Za-z])(-?\d+)(?=\s|$)/g, (_, letter, power) => letter + raised(power))
+    .replaceAll(" ", "\u00a0"); // a unit is not parted at the end of a line
 }
 
 export function words(name) {

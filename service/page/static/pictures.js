@@ -233,15 +233,15 @@ function labels(picture, groups) {
 function windTable(methods, own) {
   const rows = methods.map((each) => {
     const show = () => document.querySelector(`.method[data-method="${CSS.escape(each.name)}"]`)?.point?.();
-    const button = el("button", { type: "button", onclick: show, onfocus: show, "aria-label": `Show ${each.name} in the picture` }, "show");
-    return el("tr", { onpointerenter: show }, el("th", { scope: "row" }, el("code", {}, each.name), each.isChosen ? " (yours)" : ""),
+    const button = el("button", { type: "button", onclick: show, onfocus: show, "aria-label": `Show ${each.name} in the picture` }, el("code", {}, each.name));
+    return el("tr", { onpointerenter: show }, el("th", { scope: "row" }, button, each.isChosen ? " (yours)" : "",
+        each.record?.source ? el("span", { class: "help" }, source(each.record.source.source, each.record.source.doi)) : ""),
       el("td", { class: "number" }, each.atOwn === null ? "" : number(each.atOwn, 4)), el("td", {}, rangeText(each.record)),
-      el("td", {}, told(each).split("; ").at(-1)),
-      el("td", {}, each.record?.source ? source(each.record.source.source, each.record.source.doi) : ""), el("td", {}, button));
+      el("td", {}, told(each).split("; ").at(-1)));
   });
   return scrolled("Methods in the picture", el("table", { class: "methods-table" }, el("thead", {}, el("tr", {}, el("th", { scope: "col" }, "method"),
     el("th", { scope: "col", class: "number" }, own === null ? "" : `k at ${number(own, 3)} m s⁻¹`), el("th", { scope: "col" }, "range"),
-    el("th", { scope: "col" }, "uncertainty"), el("th", { scope: "col" }, "source"), el("th", { scope: "col" }, "in the picture"))), el("tbody", {}, rows)));
+    el("th", { scope: "col" }, "uncertainty"))), el("tbody", {}, rows)));
 }
 
 async function coursePlate(description, question, [quantity, result], signal) {
