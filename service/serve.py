@@ -1,6 +1,7 @@
 """The server: gunicorn with settings fit for loggers, spreadsheets and slow links."""
 
 import gc
+import signal
 import time
 from pathlib import Path
 from typing import Any
@@ -20,6 +21,7 @@ from service.record import Recorder
 from service.worker import Worker
 
 LOOPBACK = ("127.", "localhost", "[::1]", "unix:")
+TO_STOP = (signal.SIGTERM, signal.SIGQUIT, signal.SIGINT)
 STUCK_SECONDS = 120  # a worker whose main loop does not turn for so long is replaced
 
 
@@ -36,6 +38,14 @@ class Master(Arbiter):  # type: ignore[misc]  # gunicorn ships no types
             super().handle_term()
         self._stops_at = time.monotonic() + self.drain_seconds
         self.log.info("Not ready any more; stopping in %s s", self.drain_seconds)
+
+    def spawn_worker(self) -> Any:
+        """Start a worker; a word to stop that comes before it listens to any is kept until it does."""
+        signal.pthread_sigmask(signal.SIG_BLOCK, TO_STOP)
+        try:
+            return super().spawn_worker()
+        finally:
+            signal.pthread_sigmask(signal.SIG_UNBLOCK, TO_STOP)
 
     def manage_workers(self) -> None:
         """Keep the number of workers, and stop when it is time."""
@@ -79,6 +89,7 @@ class Server(BaseApplication):  # type: ignore[misc]
             "proc_name": "catspaw",
             "worker_tmp_dir": SHARED_MEMORY if Path(SHARED_MEMORY).is_dir() else None,
             "pre_fork": _before_fork,
+            "post_worker_init": _listen_to_signals,
             "child_exit": self._after_worker,
             "on_exit": self._at_end,
         }
@@ -113,6 +124,10 @@ class Server(BaseApplication):  # type: ignore[misc]
 
 def _before_fork(_: Any, __: Any) -> None:
     gc.freeze()  # what is there already stays shared: the collector does not touch it
+
+
+def _listen_to_signals(_: Any) -> None:
+    signal.pthread_sigmask(signal.SIG_UNBLOCK, TO_STOP)
 
 
 def _first_example(name: str) -> str:

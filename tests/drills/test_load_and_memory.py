@@ -207,8 +207,8 @@ from service.counts import Counts, make_folder
 from service.record import Recorder
 Recorder.counts = Counts(make_folder())
 recorder, took = object.__new__(Recorder), timedelta(seconds=0.001)
-environ = {"REQUEST_METHOD": "POST", "PATH_INFO": "/v1/flux", "REMOTE_ADDR": "127.0.0.1", "catspaw.id": "0123456789abcdef"}
-environ |= {"catspaw.route": "/v1/flux", "catspaw.samples": 1, "catspaw.bytes": 120}
+environ = {"REQUEST_METHOD": "POST", "PATH_INFO": "/v1/flux", "REMOTE_ADDR": "127.0.0.1"}
+environ |= {"catspaw.id": "0123456789abcdef", "catspaw.route": "/v1/flux", "catspaw.samples": 1, "catspaw.bytes": 120}
 class Answer:
     status, sent = "200 OK", 900
 costs = []

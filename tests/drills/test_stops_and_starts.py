@@ -81,6 +81,18 @@ def test_a_silent_connection_does_not_hold_up_a_stop(tmp_path: Path) -> None:
         assert time.monotonic() - began < 20  # s; a stop waits 30 s for requests in flight
 
 
+def test_a_service_can_be_stopped_while_it_starts(tmp_path: Path) -> None:
+    """The word to stop may reach a worker that does not listen to any yet, once in some twenty times without care."""
+    spent = []
+    for _ in range(12):
+        with served(tmp_path) as one:
+            began = time.monotonic()
+            assert one.stop() == 0
+            spent.append(time.monotonic() - began)
+
+    assert max(spent) < 20  # s; a worker that does not hear it is killed after 30 s
+
+
 def test_a_draining_service_says_so_and_goes_on_answering(tmp_path: Path) -> None:
     with served(tmp_path, {"DRAIN_SECONDS": 3600}) as one:
         one.process.send_signal(signal.SIGTERM)
