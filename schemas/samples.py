@@ -21,6 +21,12 @@ NO_NUMBERS = {bool: "true or false", list: "an array inside an array", dict: "an
 SHOWN = 60  # characters of a bad value that are repeated to its sender
 
 
+class Numbers(list[Any]):
+    """A JSON array of which its reader knows that it holds nothing but numbers and null."""
+
+    __slots__ = ()
+
+
 class Text(str):
     """A value from a query or a form, where numbers are text."""
 
@@ -127,7 +133,7 @@ class Measured(fields.Field[Reading]):
     def _array(self, numbers: list[Any]) -> Array:
         if not numbers:
             raise _fault(self.term, "length", "holds no values")
-        if not set(map(type, numbers)) <= READ_AT_ONCE:
+        if not isinstance(numbers, Numbers) and not set(map(type, numbers)) <= READ_AT_ONCE:
             numbers = self._elements(numbers)
         try:
             return np.array(numbers, dtype=float)

@@ -13,7 +13,7 @@ from flask import Request
 from werkzeug.datastructures import MultiDict
 from werkzeug.formparser import FormDataParser
 
-from schemas.samples import Text
+from schemas.samples import Numbers, Text
 from service.bodies import read_body, too_large
 from service.config import Config
 from service.csv_table import Table, TableError, open_table
@@ -192,7 +192,27 @@ def _from_json(body: bytes, config: Config) -> dict[str, Any]:
         raise Refused(Fault("unreadable", "body", f"is {what}: send one object, its values arrays of columns", EXAMPLE))
     if body.count(b'"') != 2 * _strings(document) or b"\\" in body:
         _refuse_repeated(body)
-    return document
+        return document
+    return _with_numbers(document) if _is_plain(body, document) else document
+
+
+def _is_plain(body: bytes, document: Mapping[str, Any]) -> bool:
+    """Tell by counting whether the arrays of a document without text in them hold but numbers and null."""
+    objects = [document, *(value for value in document.values() if isinstance(value, dict))]
+    arrays = sum(isinstance(value, list) for each in objects for value in each.values())
+    as_counted = body.count(b"[") == arrays and body.count(b"{") == len(objects)
+    return as_counted and b"true" not in body and b"false" not in body
+
+
+def _with_numbers(document: Mapping[str, Any]) -> dict[str, Any]:
+    """Return a document with its arrays marked, so that their elements need not be looked at one by one."""
+    marked: dict[str, Any] = {}
+    for name, value in document.items():
+        if isinstance(value, list):
+            marked[name] = value if _begins_with_text(value) else Numbers(value)
+        else:
+            marked[name] = _with_numbers(value) if isinstance(value, dict) else value
+    return marked
 
 
 def _lenient(body: bytes, error: orjson.JSONDecodeError) -> Any:
@@ -213,14 +233,19 @@ def _constant(word: str) -> None:
 
 
 def _strings(document: Mapping[str, Any]) -> int:
-    """Return how many strings a document holds as its keys and values and those of its objects, but no deeper."""
-    count = len(document)
-    for value in document.values():
+    """Return how many strings a document and its objects hold, but no deeper; of arrays those that begin with one."""
+    objects = [document, *(value for value in document.values() if isinstance(value, dict))]
+    count = sum(len(each) for each in objects)
+    for value in (value for each in objects for value in each.values()):
         if isinstance(value, str):
             count += 1
-        elif isinstance(value, dict):
-            count += len(value) + sum(isinstance(inner, str) for inner in value.values())
+        elif _begins_with_text(value):
+            count += sum(isinstance(element, str) for element in value)
     return count
+
+
+def _begins_with_text(value: object) -> bool:
+    return isinstance(value, list) and bool(value) and isinstance(value[0], str)
 
 
 def _refuse_repeated(body: bytes) -> None:
