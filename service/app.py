@@ -5,7 +5,7 @@ import re
 import secrets
 from collections.abc import Callable
 
-from flask import Flask, Response, g, request
+from flask import Flask, Request, Response, g, request
 from werkzeug.exceptions import NotFound
 
 from service import errors
@@ -56,24 +56,31 @@ def create_app(config: Config | None = None) -> Flask:
 
 def _view(quantity: Quantity, config: Config, gate: Gate) -> Callable[[], Response]:
     def view() -> Response:
-        return respond(quantity, request, config, gate)
+        return respond(quantity, _this_request(), config, gate)
 
     return view
 
 
+def _this_request() -> Request:
+    """Return the request itself: its proxy looks it up at every turn."""
+    found: Request = request._get_current_object()  # type: ignore[attr-defined]
+    return found
+
+
 def _begin(config: Config) -> Callable[[], Response | None]:
     def begin() -> Response | None:
-        g.request_id = request.environ[NAMED] = request_id(request.headers.get("X-Request-ID", ""))
-        request.environ[ROUTE] = request.url_rule.rule if request.url_rule else None
-        if request.method == "OPTIONS":
+        asked = _this_request()
+        g.request_id = asked.environ[NAMED] = request_id(asked.headers.get("X-Request-ID", ""))
+        asked.environ[ROUTE] = asked.url_rule.rule if asked.url_rule else None
+        if asked.method == "OPTIONS":
             return _empty()
-        if len(request.query_string) > QUERY_BYTES:
-            reason = f"is {len(request.query_string)} bytes long, over the limit: send the values in the body of a POST"
+        if len(asked.query_string) > QUERY_BYTES:
+            reason = f"is {len(asked.query_string)} bytes long, over the limit: send the values in the body of a POST"
             raise Refused(Fault("too_large", "query", reason, f"{QUERY_BYTES} bytes"), status=414)
         _check_encoding()
-        if "//" in request.environ.get("PATH_INFO", ""):  # the router forgives it at the start
+        if "//" in asked.environ.get("PATH_INFO", ""):  # the router forgives it at the start
             raise NotFound
-        if config.token and request.path.startswith(GUARDED) and not _knows(config.token):
+        if config.token and asked.path.startswith(GUARDED) and not _knows(config.token):
             return errors.unauthorised()
         return None
 
@@ -116,14 +123,15 @@ def _finish(config: Config) -> Callable[[Response], Response]:
 
     def finish(response: Response) -> Response:
         headers = response.headers
-        headers.extend([*always, ("X-Request-ID", g.get("request_id", ""))])  # one call costs less than one a header
+        told = [*always, ("X-Request-ID", g.get("request_id", ""))]
+        if "Cache-Control" not in headers:
+            told.append(("Cache-Control", COMPUTED))
+        if "Referrer-Policy" not in headers:
+            told.append(("Referrer-Policy", NO_REFERRER))
+        headers.extend(told)  # one call costs less than one a header
         if config.cors and request.method == "OPTIONS":
             headers["Access-Control-Allow-Methods"] = "GET, HEAD, POST, OPTIONS"
             headers["Access-Control-Allow-Headers"] = "Content-Type, Authorization, X-Request-ID"
-        if "Cache-Control" not in headers:
-            headers["Cache-Control"] = COMPUTED
-        if "Referrer-Policy" not in headers:
-            headers["Referrer-Policy"] = NO_REFERRER
         return response
 
     return finish

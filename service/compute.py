@@ -42,8 +42,7 @@ def respond(quantity: Quantity, request: HttpRequest, config: Config, gate: Gate
         response, checked = _answered(quantity, request, config, turn, gate)
     if checked.options.get("detail") != "brief":
         assumed, methods = writers.header_text(checked.question)
-        response.headers["Catspaw-Assumed"] = assumed
-        response.headers["Catspaw-Methods"] = methods
+        response.headers.extend([("Catspaw-Assumed", assumed), ("Catspaw-Methods", methods)])
     return response
 
 
