@@ -1,6 +1,6 @@
 """The names that a quantity knows: its inputs, its options, and what is told of the others."""
 
-from collections.abc import Container, Sequence
+from collections.abc import Sequence
 from functools import lru_cache
 from typing import Any
 
@@ -134,24 +134,6 @@ def schema_of(quantity: Quantity, names: frozenset[str]) -> Schema:
 NAME_LIMIT = 100  # characters
 TOLD = 20  # unknown names that are told in full
 
-# Words that belong to this vocabulary but to parts of it that do not answer yet: refused, never ignored.
-_PARTS = {
-    "a wind that varies within its averaging time": "wind_averaging wind_speed_variance weibull_shape",
-    "a reading without drying": "air_mole_fraction_wet water_mole_fraction_wet air_temperature relative_humidity",
-    "an equilibrator apart from the water": "equilibrator_temperature equilibrator_pressure temperature_correction",
-    "a closed headspace": "headspace_ratio headspace_start_mole_fraction",
-    "saturation as the water side": "water_saturation saturation_pressure",
-    "the skin of the water": "subskin_temperature skin_temperature skin_correction",
-}
-NOT_SERVED = {name: part for part, names in _PARTS.items() for name in names.split()}
-
-
-def not_served(name: str, known: Container[str]) -> str | None:
-    """Return the part of the vocabulary that a name belongs to, if that part does not answer yet."""
-    if name in known:
-        return None
-    return NOT_SERVED.get(name)
-
 
 def _unknown_name(quantity: Quantity, name: str) -> Fault:
     known = request_fields(quantity)
@@ -163,8 +145,6 @@ def _unknown_name(quantity: Quantity, name: str) -> Fault:
     for other in QUANTITIES.values():
         if name in request_fields(other) and name not in known:
             return Fault("unknown_name", name, f"is an input of {other.name}, not of {quantity.name}")
-    if part := not_served(name, known):
-        return Fault("unknown_name", name, f"is not served yet ({part}): leave it out")
     names = [each for each in known if each != "units"]
     return unknown(name, (*names, "form", "errors", "nocache"), f"a name that {quantity.name} knows")
 

@@ -18,7 +18,7 @@ from service import writers
 from service.columns import bind
 from service.config import Config
 from service.csv_blocks import joined
-from service.csv_table import Block, TableError
+from service.csv_table import Block, Table, TableError
 from service.csv_text import answer_header, answer_lines, number_cells
 from service.errors import LISTED, BadSamples
 from service.physics.answer import Answer, Unreadable, answer
@@ -62,9 +62,9 @@ def _answered(
     if with_steps and form != "json":
         told_in_json = f"steps are told in JSON, not in {form}: send form=json"
         raise Refused(Fault("unknown_option", "detail", told_in_json, "form=json"))
-    rows = sent.table.rows_at_most if sent.table else checked.samples
+    rows = table.rows_at_most if table else checked.samples
     turn.large(rows > SMALL_SAMPLES or checked.options.get("uncertainty_method") == MONTE_CARLO)
-    if sent.table is None:
+    if table is None:
         values = {each.term: each.values for each in checked.inputs if each.values is not None}
         asked = asked_of(checked, {}, checked.samples)
         series = series_of(checked, checked.series.time.values) if checked.series else None
@@ -72,9 +72,9 @@ def _answered(
         response = _written(_strictly(told, checked), checked, form, asked, _more(told, checked, series, sent))
         request.environ[SAMPLES] = checked.samples
     elif form == "csv":
-        response = _csv_behind(sent, checked, request, gate)
+        response = _csv_behind(table, checked, request, gate)
     else:
-        told, series, asked = _whole_table(sent, checked)
+        told, series, asked = _whole_table(table, checked)
         response = _written(told, checked, form, asked, _more(told, checked, series, sent))
         request.environ[SAMPLES] = told.samples
     return response, checked
@@ -187,7 +187,7 @@ def _csv_alone(answered: Answer, checked: Request, asked: Asked | None) -> bytes
 class _Columns:
     """The inputs of a table: constants beside it and columns in it, block by block."""
 
-    def __init__(self, sent: Sent, checked: Request) -> None:
+    def __init__(self, table: Table, checked: Request) -> None:
         used = checked.question.used
         self.constants: dict[str, Array] = {
             each.term: each.values for each in checked.inputs if each.values is not None
@@ -204,22 +204,20 @@ class _Columns:
                 *(Fault("length", name, "is a list beside a table: send one value, or a column") for name in lists)
             )
         self.checked = checked
-        if sent.table is None:
-            raise Refused(Fault("table", "csv", "is not there"))
         if checked.series and checked.series.time.column is not None:
             self.columns.append(checked.series.time)
         placed = {each.term: each.column for each in self.columns if each.column is not None}
         doubted = [each.column for each in self.doubts if each.column is not None]
         indices = [column.index for column in (*placed.values(), *doubted)]
-        names = {term: sent.table.header.names[column.index] for term, column in placed.items()}
+        names = {term: table.header.names[column.index] for term, column in placed.items()}
         self.labels = {term: f"{term} (column {name})" for term, name in names.items() if term != name}
         nothing_yet = {each.term: np.zeros(1) for each in self.doubts}
-        self.rows = sent.table.rows_at_most
+        self.rows = table.rows_at_most
         self.asked = asked_of(checked, nothing_yet, self.rows)
         series = [each for each in self.columns if TERMS[each.term].holds == "series"]
         moments = {each.column.index: each.conversion.factor for each in series if each.column is not None}
         comma = checked.options.get("decimal") == "comma"
-        self.blocks = sent.table.blocks(indices, decimal_comma=comma, moments=moments)
+        self.blocks = table.blocks(indices, decimal_comma=comma, moments=moments)
         if series:  # it hangs together
             self.blocks = joined(self.blocks)
 
@@ -260,13 +258,11 @@ class _Columns:
             raise refused_table(error) from error
 
 
-def _csv_behind(sent: Sent, checked: Request, request: HttpRequest, gate: Gate) -> Response:
+def _csv_behind(table: Table, checked: Request, request: HttpRequest, gate: Gate) -> Response:
     """Answer a table with a table, block by block; everything that can be refused is refused with the first."""
-    if sent.table is None:
-        raise Refused(Fault("table", "csv", "is not there"))
-    header, options = sent.table.header, checked.options
-    table = _Columns(sent, checked)
-    added = writers.csv_names(checked.question, options.get("headers", "units"), table.asked, _course(checked))
+    header, options = table.header, checked.options
+    gathered = _Columns(table, checked)
+    added = writers.csv_names(checked.question, options.get("headers", "units"), gathered.asked, _course(checked))
     plain = {name.partition(" [")[0] for name in added}
     plain -= {
         name for name, raw in zip(header.names, header.raw, strict=True) if {name, raw} & {*options.get("ignore", ())}
@@ -274,7 +270,7 @@ def _csv_behind(sent: Sent, checked: Request, request: HttpRequest, gate: Gate) 
     if clash := [name for name in header.names if name in plain]:
         cure = "is also the name of a column to be written: rename it, or send ignore={} to pass it through as it is"
         raise Refused(*(Fault("collision", name, cure.format(name)) for name in clash))
-    answers = table.answers()
+    answers = gathered.answers()
     first = next(answers, None)
     missing = options.get("missing", "").encode()
 
@@ -294,7 +290,7 @@ def _csv_behind(sent: Sent, checked: Request, request: HttpRequest, gate: Gate) 
     parts = chain([head], (lines(block, each) for block, each in every))
     if request.environ.get("SERVER_PROTOCOL") == "HTTP/1.0":
         return Response(b"".join(parts), content_type=CSV_TYPE)
-    return Response(_in_turns(parts, gate, sent.table.rows_at_most > SMALL_SAMPLES), content_type=CSV_TYPE)
+    return Response(_in_turns(parts, gate, table.rows_at_most > SMALL_SAMPLES), content_type=CSV_TYPE)
 
 
 def _in_turns(parts: Iterator[bytes], gate: Gate, is_large: bool) -> Iterator[bytes]:
@@ -308,9 +304,9 @@ def _in_turns(parts: Iterator[bytes], gate: Gate, is_large: bool) -> Iterator[by
         yield part
 
 
-def _whole_table(sent: Sent, checked: Request) -> tuple[Answer, Series | None, Asked | None]:
+def _whole_table(table: Table, checked: Request) -> tuple[Answer, Series | None, Asked | None]:
     """Return the answer to a whole table at once, for forms that have no lines to stand behind, and its series."""
-    gathered = _Columns(sent, checked)
+    gathered = _Columns(table, checked)
     (block,) = joined(gathered.blocks)
     samples = len(block.lines)
     if samples > SAMPLES_LIMIT:

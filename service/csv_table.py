@@ -9,6 +9,7 @@ which is walked cell by cell.
 import re
 from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
+from functools import cached_property
 
 import numpy as np
 from numpy.typing import NDArray
@@ -128,7 +129,7 @@ class Table:
         self._blank_lines = re.compile(rb"(?:[%b]*+\r?(?:\n|\Z))++" % blanks)
         self._cell = re.compile(rb'("(?:[^"]++|"")*+")?([^\n%b]*+)' % self._delimiter)
 
-    @property
+    @cached_property
     def rows_at_most(self) -> int:
         """Return an upper limit of the data rows."""
         return self._body.count(b"\n") + 1

@@ -64,11 +64,6 @@ def relative_uncertainty(value: float, kind: str, stated: str, source: Source | 
     return Uncertainty(value, True, kind, stated, source)
 
 
-def absolute_uncertainty(value: float, kind: str, stated: str, source: Source | None = None) -> Uncertainty:
-    """Return a standard uncertainty in the unit of the result."""
-    return Uncertainty(value, False, kind, stated, source)
-
-
 Limits = tuple[float, float]
 
 
@@ -186,7 +181,6 @@ class Gas:
     constants: Mapping[str, float] = field(default_factory=dict)
     element: str | None = None
     element_mass: float | None = None
-    inert: bool = True
     dry_air: str = ""
     caution: str = ""
     standard_names: Mapping[str, str] = field(default_factory=dict)
@@ -228,7 +222,6 @@ class Quantity:
     title: str
     results: tuple[str, ...]
     more: tuple[str, ...] = ()
-    sides: tuple[str, ...] = ()
     needs_side: Mapping[str, str] = field(default_factory=dict)
     units: Mapping[str, str] = field(default_factory=dict)
     of_gas: bool = True

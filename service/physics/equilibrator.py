@@ -5,6 +5,7 @@ import numpy as np
 from service.physics import sources
 from service.physics.constants import GAS_CONSTANT_LITRE_ATM, STANDARD_ATMOSPHERE, ZERO_CELSIUS
 from service.physics.declare import Array, Remark, derived, same_as, step
+from service.physics.sides import of_dry_air
 
 TAKAHASHI_LIMIT = 20.0  # practical salinity below which the sea-water correction is not the default
 WAYS = ("water_mole_fraction", "water_mole_fraction_wet")
@@ -45,7 +46,7 @@ def partial_pressure_at_equilibrator(
     (...) array
         [uatm]
     """
-    return water_mole_fraction * ((equilibrator_pressure - vapour_pressure_at_equilibrator) / STANDARD_ATMOSPHERE)
+    return of_dry_air(water_mole_fraction, equilibrator_pressure, vapour_pressure_at_equilibrator)
 
 
 @step("partial_pressure_at_equilibrator", way="water_mole_fraction_wet", formula="p = x_wet P_eq")
@@ -163,15 +164,10 @@ def headspace_concentration(
     (...) array
         [umol L-1]
     """
-    p_start = partial_pressure_at_equilibrator_of(
-        headspace_start_mole_fraction, equilibrator_pressure, vapour_pressure_at_equilibrator
-    )
+    p_start = of_dry_air(headspace_start_mole_fraction, equilibrator_pressure, vapour_pressure_at_equilibrator)
     RT = GAS_CONSTANT_LITRE_ATM * (equilibrator_temperature + ZERO_CELSIUS)
     dissolved = solubility_per_litre_at_equilibrator * fugacity_at_equilibrator
     return dissolved + headspace_ratio * (partial_pressure_at_equilibrator - p_start) / RT
-
-
-partial_pressure_at_equilibrator_of = partial_pressure_at_equilibrator  # the same formula for the gas before
 
 
 def fugacity_from_equilibrator(fugacity_at_equilibrator: Array, temperature_factor: Array) -> Array:

@@ -106,7 +106,6 @@ FLUX = quantity(
             "revelle_factor",
         ),
         needs_side={"wind_speed_10m": "wind_speed"},
-        sides=("water_side", "air_side"),
         units={"solubility": "mol L-1 atm-1"},
         summaries=("flux", "evasion", "invasion"),
     )

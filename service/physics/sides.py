@@ -40,6 +40,26 @@ def dry_mole_fraction_in_air(
     return air_mole_fraction_wet / (1.0 - relative_humidity / 100.0 * vapour_pressure_at_mast / surface_pressure)
 
 
+def of_dry_air(mole_fraction: Array, pressure: Array, vapour_pressure: Array) -> Array:
+    """Return the partial pressure of a gas in vapour-saturated air from its mole fraction in the air when dried.
+
+    Parameters
+    ----------
+    mole_fraction : (...) array
+        [umol mol-1]
+    pressure : (...) array
+        Total. [hPa]
+    vapour_pressure : (...) array
+        [hPa]
+
+    Returns
+    -------
+    (...) array
+        [uatm]
+    """
+    return mole_fraction * ((pressure - vapour_pressure) / STANDARD_ATMOSPHERE)
+
+
 def partial_pressure_in_air(
     dry_mole_fraction_in_air: Array, surface_pressure: Array, vapour_pressure_at_interface: Array
 ) -> Array:
@@ -59,7 +79,7 @@ def partial_pressure_in_air(
     (...) array
         [uatm]
     """
-    return dry_mole_fraction_in_air * ((surface_pressure - vapour_pressure_at_interface) / STANDARD_ATMOSPHERE)
+    return of_dry_air(dry_mole_fraction_in_air, surface_pressure, vapour_pressure_at_interface)
 
 
 for _way in ("air_mole_fraction", "air_mole_fraction_wet"):

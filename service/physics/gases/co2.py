@@ -14,7 +14,6 @@ CO2 = gas(
         molar_mass=44.009,
         element="C",
         element_mass=12.011,
-        inert=False,
         constants={"reacts_with_water": 1.0},
         defaults={
             "solubility": "weiss-1974",
